@@ -76,8 +76,14 @@ struct Analysis {
   FigureValues figures{};  ///< NaN where not active or not existing
 };
 
+/// Which response the gain and cutoffs are taken from.
+enum class ResponseModel {
+  exact,
+  pole_model,  ///< closed form, for first steps of a search
+};
+
 /// Full analysis at one condition. Cheap: microseconds.
-Analysis analyse(const Stage& stage, const GainDefinition& definition);
+Analysis analyse(const Stage& stage, const GainDefinition& definition, ResponseModel model = ResponseModel::exact);
 
 /// Why a figure is absent, in words with numbers ("VCE would be 0.1 V, needs 0.5 V"); empty where it is present.
 std::string why_absent(const Analysis& analysis, const Stage& stage, const GainDefinition& definition, Figure figure);
@@ -125,6 +131,7 @@ inline constexpr std::size_t kSensitivityCauses = kRoleCount + 1;
 using Sensitivity = std::array<std::array<double, kSensitivityCauses>, kFigureCount>;
 
 /// Sensitivities of every computed figure to every part and hFE, junction rise held.
-Sensitivity sensitivity(const Stage& stage, const Analysis& analysis, const GainDefinition& definition);
+Sensitivity sensitivity(const Stage& stage, const Analysis& analysis, const GainDefinition& definition,
+                        ResponseModel model = ResponseModel::exact);
 
 }  // namespace bandwright

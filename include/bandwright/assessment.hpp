@@ -16,6 +16,9 @@ using CauseWidths = std::array<double, kSensitivityCauses>;
 
 double half_width(const Tolerance& tolerance);
 
+/// beta0 at 25 °C of the lowest and the highest unit of the type, at a collector current.
+std::array<double, 2> gain_limits(const BipolarParameters& device, double collector_current);
+
 /// ln(max/min)/2 of beta0 at a collector current.
 double gain_half_width(const BipolarParameters& device, double collector_current);
 

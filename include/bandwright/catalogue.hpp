@@ -6,6 +6,7 @@
 //   const Transistor* t = catalogue.find_transistor("BC547B");
 #pragma once
 
+#include <bandwright/fault.hpp>
 #include <bandwright/quantity.hpp>
 #include <bandwright/spec.hpp>
 #include <filesystem>
@@ -102,6 +103,7 @@ struct Catalogue {
   std::vector<Transistor> transistors;
   std::map<std::string, SourceEntry> sources;
 
+  /// By name, capitals or not; nullptr where there is none.
   const Transistor* find_transistor(std::string_view type) const;
   const Family* find_family(std::string_view key) const;
 };
@@ -147,5 +149,9 @@ std::vector<OfferedValue> offered_values(const Catalogue& catalogue, const Spec&
 /// One value resolved as offered_values would: family, tolerance, working value. A value in no family's range
 /// takes the nearest family of its kind.
 OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, double value);
+
+/// What a spec asks for and a catalogue cannot give: unknown devices and families, a polarity that the supply does not
+/// take, a family that is refused, a pinned value that is not sold, rules under which no value is sold.
+std::vector<Fault> check_against_catalogue(const Spec& spec, const Catalogue& catalogue);
 
 }  // namespace bandwright

@@ -45,13 +45,6 @@ struct Candidate {
   std::vector<Package> packages;             ///< lead orders
 };
 
-struct Caution {
-  std::string code;
-  std::string text;
-};
-/// The usual cautions, the same under every list.
-const std::vector<Caution>& cautions();
-
 struct DesignResult {
   Spec spec;
   RankBy ranked_by = RankBy::error;

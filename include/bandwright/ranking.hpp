@@ -6,7 +6,7 @@
 #pragma once
 
 #include <bandwright/role.hpp>
-#include <compare>
+#include <cstddef>
 #include <string>
 #include <vector>
 
@@ -15,12 +15,17 @@ namespace bandwright {
 enum class RankBy { error, sensitivity };
 
 /// What the order looks at.
-struct Standing {
+struct RankKey {
   double error = 0;
   double tolerance_sensitivity = 0;
   int distinct_values = 0;
   int series_sum = 0;
   PartValues values{};
+};
+
+/// What else tells candidates apart.
+struct Standing {
+  RankKey key;
   double collector_current = 0;
   double input_resistance = 0;
   double total_capacitance = 0;
@@ -31,10 +36,17 @@ struct Standing {
 int error_class(double error);
 int sensitivity_class(double tolerance_sensitivity);
 
+/// The part of the order that the error alone decides: by error its class; by sensitivity 0 for all that meet the spec.
+int leading_class(double error, RankBy by);
+
 /// Distinct (kind, value) pairs among the present parts.
 int distinct_values(const PartValues& values);
 
-/// True where a comes before b. A strict weak order; equal only for equal values, device and variant.
+/// True where a comes before b: a strict weak order. By sensitivity: candidates that meet the spec first, then the
+/// sensitivity class, then the error class, then as by error.
+bool comes_before(const RankKey& a, const RankKey& b, RankBy by);
+
+/// The same for standings; ties go by device, then variant.
 bool comes_before(const Standing& a, const Standing& b, RankBy by);
 
 /// True where the two differ in at least one way: another device, another variant, a collector current apart by a

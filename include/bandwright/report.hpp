@@ -3,6 +3,7 @@
 
 #include <bandwright/design.hpp>
 #include <string>
+#include <string_view>
 
 namespace bandwright {
 
@@ -25,5 +26,32 @@ std::string write_catalogue(const Catalogue& catalogue);
 std::string write_transistor(const Catalogue& catalogue, const Transistor& transistor);
 std::string write_family(const Catalogue& catalogue, const Family& family);
 std::string write_series(const Series& series);
+
+/// One candidate as a result document states it.
+struct StoredCandidate {
+  int rank = 1;
+  std::string device;
+  PartValues values{};       ///< ohm and farad as printed; 0: absent
+  FigureValues figures{};    ///< as the document states them, NaN where null; temperatures in kelvin
+  bool has_figures = false;  ///< the document carries figures
+};
+
+/// True where a JSON text calls itself a result document.
+bool is_result(std::string_view json);
+
+/// Reads the candidate of a rank from a result document. Throws InputError with every fault found.
+StoredCandidate read_candidate(std::string_view json, std::string_view name, int rank);
+
+/// How far a stored candidate's figures and recomputed ones lie apart.
+struct Agreement {
+  int compared = 0;               ///< figures that either of the two states
+  double largest = 0;             ///< largest relative difference; infinite where only one has a value
+  Figure worst = Figure::gain;    ///< where it stands
+  std::vector<Figure> differing;  ///< figures apart by more than kAgreementTolerance
+};
+/// Stored figures carry all digits, and the model gives the same bytes everywhere; this leaves room for hand-edited
+/// digits at the very end only.
+inline constexpr double kAgreementTolerance = 1e-9;
+Agreement compare(const StoredCandidate& stored, const Candidate& recomputed);
 
 }  // namespace bandwright

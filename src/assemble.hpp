@@ -1,0 +1,24 @@
+// Assembles what is reported: a candidate in full, and what belongs to the result as a whole.
+#pragma once
+
+#include <bandwright/design.hpp>
+
+namespace bandwright {
+
+/// A result with spec, definitions and assumptions, no candidates yet.
+DesignResult empty_result(const Spec& spec, RankBy by);
+
+/// The transistors that a spec names, or every one of the right polarity.
+std::vector<const Transistor*> fitting_transistors(const Spec& spec, const Catalogue& catalogue);
+
+Spec with_device(Spec spec, const std::string& device);
+
+/// Everything that is reported of one stage.
+Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogue& catalogue, const OfferedParts& parts);
+
+/// Ranks, titles, what rests on memory, explanations, and whether the spec is met. `standings` as in the candidates; may be
+/// empty for a check.
+void finish(DesignResult& result, const std::vector<Standing>& standings, const std::vector<DerivedDevice>& devices,
+            const std::string& nearest_miss);
+
+}  // namespace bandwright

@@ -1,0 +1,41 @@
+#include <bandwright/assessment.hpp>
+
+#include <algorithm>
+#include <cmath>
+
+#include <bandwright/margins.hpp>
+
+#include "device/gain_curve.hpp"
+#include "numeric/elementary.hpp"
+
+namespace bandwright {
+
+double half_width(const Tolerance& t) { return ln((1 + t.above) / (1 - t.below)) / 2; }
+
+std::array<double, 2> gain_limits(const BipolarParameters& device, double collector_current) {
+  const double x = ln(collector_current);
+  return {e_to(gain_point(device.gain_min, x).log_gain), e_to(gain_point(device.gain_max, x).log_gain)};
+}
+
+double gain_half_width(const BipolarParameters& device, double collector_current) {
+  const std::array<double, 2> limits = gain_limits(device, collector_current);
+  return ln(limits[1] / limits[0]) / 2;
+}
+
+double tolerance_sensitivity(const Spec& spec, const Sensitivity& sensitivity, const CauseWidths& widths) {
+  double largest = 0;
+  for (const FigureInfo& f : figures()) {
+    const auto& r = spec.requirement(f.figure);
+    if (!r) continue;
+    double sum = 0;
+    for (std::size_t i = 0; i < kSensitivityCauses; ++i) {
+      const double part = sensitivity[index(f.figure)][i] * widths[i];
+      sum += part * part;
+    }
+    const double share = std::sqrt(sum) / window_width(*r, f);
+    if (!(share <= largest)) largest = share;  // a NaN shows
+  }
+  return largest;
+}
+
+}  // namespace bandwright

@@ -1,0 +1,126 @@
+// A spec held against a catalogue: names that the catalogue does not hold, and rules under which nothing is sold.
+#include <algorithm>
+#include <bandwright/catalogue.hpp>
+#include <bandwright/fault.hpp>
+
+#include "catalogue/choice.hpp"
+#include "units/suggest.hpp"
+
+namespace bandwright {
+
+namespace {
+
+const char* plural(PartKind kind) { return kind == PartKind::resistor ? "resistors" : "capacitors"; }
+Dimension dimension_of(PartKind kind) {
+  return kind == PartKind::resistor ? Dimension::resistance : Dimension::capacitance;
+}
+
+std::string shown(double value, PartKind kind) { return format_quantity(value, dimension_of(kind)); }
+
+void check_devices(const Spec& spec, const Catalogue& catalogue, std::vector<Fault>& faults) {
+  std::vector<std::string> types;
+  for (const Transistor& t : catalogue.transistors) types.push_back(t.type);
+  for (std::size_t i = 0; i < spec.devices.size(); ++i) {
+    const std::string& type = spec.devices[i];
+    const std::string where = "devices[" + std::to_string(i) + "]";
+    const Transistor* found = catalogue.find_transistor(type);
+    if (found == nullptr) {
+      faults.push_back({where, type, "a transistor of the catalogue", nearest_name(type, types)});
+    } else if (found->pnp != spec.pnp()) {
+      faults.push_back({where, type + (found->pnp ? ", PNP" : ", NPN"),
+                        spec.pnp() ? "a PNP transistor, as the negative supply needs"
+                                   : "an NPN transistor, as the positive supply needs",
+                        ""});
+    }
+  }
+}
+
+std::vector<std::string> offered_keys(const Catalogue& catalogue, PartKind kind) {
+  std::vector<std::string> keys;
+  for (const Family& f : catalogue.families) {
+    if (f.kind == kind && !f.bias_dependent) keys.push_back(f.key);
+  }
+  return keys;
+}
+
+// "X7R" of "X7R ceramic capacitor": the name that a person asked for.
+std::string first_word(const std::string& name) { return name.substr(0, name.find(' ')); }
+
+void check_family(const std::string& key, const std::string& where, const Catalogue& catalogue, PartKind kind,
+                  std::vector<Fault>& faults) {
+  const Family* family = catalogue.find_family(key);
+  const std::vector<std::string> keys = offered_keys(catalogue, kind);
+  std::string listed;
+  for (const std::string& k : keys) listed += (listed.empty() ? "" : ", ") + k;
+  if (family == nullptr) {
+    faults.push_back({where, key, "one of: " + listed, nearest_name(key, keys)});
+  } else if (family->kind != kind) {
+    faults.push_back({where, key, std::string("a family of ") + plural(kind) + ", one of: " + listed, ""});
+  } else if (family->bias_dependent) {
+    faults.push_back({where, key,
+                      "one of: " + listed + "; " + first_word(family->name) +
+                          " is not offered until its loss under DC bias is counted",
+                      ""});
+  }
+}
+
+void check_rules(const PartRules& rules, PartKind kind, const Catalogue& catalogue, std::vector<Fault>& faults) {
+  const std::string parts = std::string("parts.") + plural(kind);
+  for (std::size_t i = 0; i < rules.families.size(); ++i) {
+    check_family(rules.families[i], parts + ".families[" + std::to_string(i) + "]", catalogue, kind, faults);
+  }
+  if (!rules.series.empty() && find_series(rules.series) == nullptr) {
+    std::vector<std::string> names;
+    for (const Series& s : series()) names.push_back(s.name);
+    faults.push_back({parts + ".series", rules.series, "a series of IEC 60063: E3, E6, E12, E24, E48, E96 or E192",
+                      nearest_name(rules.series, names)});
+  }
+}
+
+void check_pinned(const Spec& spec, const Catalogue& catalogue, const RoleInfo& role, std::vector<Fault>& faults) {
+  const double value = *spec.parts.pinned[index(role.role)];
+  if (!(value > 0)) return;
+  const PartRules& rules = rules_for(spec, role.role);
+  const std::string where = std::string("parts.pinned.") + role.key;
+  const Choice sold = Choice::tightest(catalogue, rules, role.kind);
+  ValueRange made;
+  bool is_made = false;
+  for (const OfferedFamily& f : sold.families()) {
+    is_made = is_made || holds(f.family->made, value);
+    made = {made.max == 0 ? f.family->made.min : std::min(made.min, f.family->made.min),
+            std::max(made.max, f.family->made.max)};
+  }
+  if (!is_made) {
+    faults.push_back({where, shown(value, role.kind),
+                      "a value that is sold: " + shown(made.min, role.kind) + " to " + shown(made.max, role.kind), ""});
+  } else if (Choice(catalogue, rules, role.kind).families().empty()) {
+    faults.push_back({where, shown(value, role.kind),
+                      "a tolerance in parts." + std::string(plural(role.kind)) + " that some family offers", ""});
+  }
+}
+
+void check_roles(const Spec& spec, const Catalogue& catalogue, std::vector<Fault>& faults) {
+  for (const RoleInfo& role : roles()) {
+    if (spec.parts.pinned[index(role.role)]) {
+      check_pinned(spec, catalogue, role, faults);
+    } else if (!role.may_be_absent && offered_values(catalogue, spec, role.role).empty()) {
+      faults.push_back({std::string("parts.") + plural(role.kind), std::string("no value for ") + role.key,
+                        "families, series, tolerance and range under which at least one value is sold", ""});
+    }
+  }
+}
+
+}  // namespace
+
+std::vector<Fault> check_against_catalogue(const Spec& spec, const Catalogue& catalogue) {
+  std::vector<Fault> faults;
+  check_devices(spec, catalogue, faults);
+  const std::size_t before = faults.size();
+  check_rules(spec.parts.resistors, PartKind::resistor, catalogue, faults);
+  check_rules(spec.parts.capacitors, PartKind::capacitor, catalogue, faults);
+  // An unknown family or series would show again at every role.
+  if (faults.size() == before) check_roles(spec, catalogue, faults);
+  return faults;
+}
+
+}  // namespace bandwright

@@ -1,0 +1,62 @@
+// The whole pipeline: the file to read first.
+//
+//   spec -> catalogue -> device -> stage -> analysis -> margins -> assessment -> ranking -> search -> purchase -> report
+#include <bandwright/design.hpp>
+
+#include <algorithm>
+#include <cmath>
+
+#include <bandwright/search.hpp>
+
+#include "assemble.hpp"
+
+namespace bandwright {
+
+DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOptions& options) {
+  if (auto faults = check_against_catalogue(spec, catalogue); !faults.empty()) throw InputError(std::move(faults));
+  DesignResult result = empty_result(spec, options.rank_by);
+
+  std::vector<DerivedDevice> devices;
+  for (const Transistor* t : fitting_transistors(spec, catalogue)) devices.push_back(derive_parameters(*t));
+  const std::vector<Dropped> dropped = screen_devices(spec, devices);
+  for (const Dropped& d : dropped) result.dropped.push_back(d.reason);
+  std::vector<DerivedDevice> left;
+  for (std::size_t i = 0; i < devices.size(); ++i) {
+    const bool is_out = std::any_of(dropped.begin(), dropped.end(), [i](const Dropped& d) { return d.device == i; });
+    if (!is_out) left.push_back(devices[i]);
+  }
+  // where a ceiling rules out every device the nearest candidates are still shown
+  const std::vector<DerivedDevice>& tried = left.empty() ? devices : left;
+
+  const SearchOutcome outcome =
+      search(spec, catalogue, tried, {options.rank_by, options.threads, options.keep_going});
+  result.interrupted = outcome.interrupted;
+
+  std::vector<Standing> standings;
+  for (const Found& f : outcome.found) standings.push_back(f.standing);
+  std::vector<Standing> kept;
+  for (std::size_t i : alternatives(standings, options.rank_by, static_cast<std::size_t>(spec.candidates))) {
+    const Found& f = outcome.found[i];
+    result.candidates.push_back(assemble(spec, tried[f.device], catalogue, f.parts));
+    kept.push_back(f.standing);
+  }
+  finish(result, kept, tried, outcome.nearest_miss);
+  return result;
+}
+
+DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values) {
+  const Transistor* transistor = catalogue.find_transistor(device);
+  if (!transistor) throw InputError(check_against_catalogue(with_device(spec, device), catalogue));
+  const std::vector<DerivedDevice> devices = {derive_parameters(*transistor)};
+  OfferedParts parts;
+  for (const RoleInfo& r : roles()) {
+    const double value = values[index(r.role)];
+    if (value > 0) parts[index(r.role)] = resolve_value(catalogue, spec, r.role, value);
+  }
+  DesignResult result = empty_result(spec, RankBy::error);
+  result.candidates.push_back(assemble(spec, devices.front(), catalogue, parts));
+  finish(result, {}, devices, "");
+  return result;
+}
+
+}  // namespace bandwright

@@ -1,0 +1,253 @@
+// The result document, "bandwright/result" version 1. A field that has no value is null, and `notes` says why.
+#include <bandwright/report.hpp>
+#include <bandwright/version.hpp>
+#include <cmath>
+#include <nlohmann/json.hpp>
+
+#include "report/shown_figures.hpp"
+
+namespace bandwright {
+
+namespace {
+
+using Json = nlohmann::ordered_json;
+
+constexpr int kDocumentVersion = 1;
+constexpr const char* kNotInThisVersion = "not computed by this version";
+constexpr std::array kLaterFields = {"worst_case", "spread", "capability", "yield", "verdict"};
+
+// The notes of one candidate: those that came with it, and one for each null that is written.
+class Notes {
+public:
+  explicit Notes(const std::map<std::string, std::string>& given) : notes_(given) {}
+
+  Json number(double value, const std::string& field, const std::string& reason) {
+    if (std::isfinite(value)) return value;
+    notes_.try_emplace(field, reason);
+    return nullptr;
+  }
+  Json nothing(const std::string& field, const std::string& reason) {
+    notes_.try_emplace(field, reason);
+    return nullptr;
+  }
+  Json to_json() const { return notes_; }
+
+private:
+  std::map<std::string, std::string> notes_;
+};
+
+Json device_parameters(const Candidate& candidate, Notes& notes) {
+  const BipolarParameters& p = candidate.parameters;
+  const OperatingPoint& point = candidate.analysis.point;
+  const char* no_point = "no operating point";
+  const double rise = 1 + point.collector_emitter_voltage * p.inverse_early_voltage;
+  Json out;
+  out["current_gain"] = notes.number(point.gain_at_zero_vce * rise, "device_parameters.current_gain", no_point);
+  out["current_gain_at_zero_vce"] =
+      notes.number(point.gain_at_zero_vce, "device_parameters.current_gain_at_zero_vce", no_point);
+  out["current_gain_limits_at_zero_vce"] = {
+      notes.number(candidate.gain_limits[0], "device_parameters.current_gain_limits_at_zero_vce", no_point),
+      notes.number(candidate.gain_limits[1], "device_parameters.current_gain_limits_at_zero_vce", no_point)};
+  out["log_saturation_current"] = p.log_saturation_current;
+  out["early_voltage"] = notes.number(1 / p.inverse_early_voltage, "device_parameters.early_voltage", "infinite");
+  out["base_spreading_resistance"] = p.base_resistance;
+  out["base_transit_time"] = p.transit_time;
+  out["emitter_depletion_capacitance"] = p.emitter_capacitance;
+  out["feedback_capacitance_at_zero_bias"] = p.feedback_capacitance;
+  out["collector_built_in_potential"] = p.built_in_potential;
+  out["collector_grading_exponent"] = p.grading_exponent;
+  out["saturation_current_temperature_exponent"] = p.saturation_current_exponent;
+  out["current_gain_temperature_exponent"] = p.gain_exponent;
+  out["bandgap_voltage"] = p.bandgap;
+  out["collector_cutoff_current"] = p.cutoff_current;
+  out["saturation_voltage"] = p.saturation_voltage;
+  out["thermal_resistance"] = p.thermal_resistance;
+  return out;
+}
+
+Json text_or_null(const std::string& text) { return text.empty() ? Json(nullptr) : Json(text); }
+
+Json part(const Part& part, const Candidate& candidate, Notes& notes) {
+  const RoleInfo& role = info(part.role);
+  const bool resistor = role.kind == PartKind::resistor;
+  const std::string field = std::string("parts.") + role.designator + ".";
+  const char* beyond = "the family has no rating above the stress";
+  Json out;
+  out["designator"] = role.designator;
+  out["role"] = role.key;
+  out["kind"] = resistor ? "resistor" : "capacitor";
+  out["value"] = part.value;
+  out["value_code"] = part.code;
+  out["series"] =
+      part.series.empty() ? notes.nothing(field + "series", "the value stands in no series") : Json(part.series);
+  out["tolerance"] = {-part.tolerance.below, part.tolerance.above};
+  out["family"] = part.family;
+  out["power_rating"] = resistor ? notes.number(part.power_rating, field + "power_rating", beyond) : Json(nullptr);
+  out["voltage_rating"] = notes.number(part.voltage_rating, field + "voltage_rating", beyond);
+  out["polarity"] = text_or_null(part.polarity);
+  out["nodes"] = part.nodes;
+  out["part_number"] = part.part_number;
+  out["working_value"] = candidate.working_values[index(part.role)];
+  out["highest_voltage"] = notes.number(part.volts, field + "highest_voltage", "no operating point");
+  if (resistor)
+    out["highest_dissipation"] = notes.number(part.watts, field + "highest_dissipation", "no operating point");
+  return out;
+}
+
+Json parts(const Candidate& candidate, Notes& notes) {
+  Json out = Json::array();
+  for (const Part& one : candidate.parts) out.push_back(part(one, candidate, notes));
+  return out;
+}
+
+Json figures_of(const Candidate& candidate, Notes& notes) {
+  Json out;
+  for (const FigureInfo& figure : figures()) {
+    const std::string key = shown_key(figure);
+    const char* reason = figure.use == FigureUse::reserved ? kNotInThisVersion : "no value at this operating point";
+    out[key] = notes.number(shown_value(candidate, figure), key, reason);
+  }
+  return out;
+}
+
+Json time_constants(const std::vector<TimeConstant>& list, const std::string& field, Notes& notes) {
+  Json out = Json::array();
+  const char* reason = "a capacitor that sees no resistance, or no capacitance at all";
+  for (const TimeConstant& one : list) {
+    out.push_back({{"capacitor", one.capacitor},
+                   {"resistance", notes.number(one.resistance, field + ".resistance", reason)},
+                   {"time_constant", notes.number(one.seconds, field + ".time_constant", reason)},
+                   {"frequency", notes.number(one.frequency, field + ".frequency", reason)},
+                   {"share", notes.number(one.share, field + ".share", reason)}});
+  }
+  return out;
+}
+
+Json pole_model(const Candidate& candidate, Notes& notes) {
+  const PoleModel& model = candidate.poles_estimate;
+  const char* reason = "no estimate at this operating point";
+  Json out;
+  out["midband_gain"] = notes.number(model.midband_gain, "pole_model.midband_gain", reason);
+  out["textbook_gain"] = notes.number(model.textbook_gain, "pole_model.textbook_gain", reason);
+  out["lower_cutoff"] = notes.number(model.lower_cutoff, "pole_model.lower_cutoff", reason);
+  out["upper_cutoff"] = notes.number(model.upper_cutoff, "pole_model.upper_cutoff", reason);
+  out["miller_upper_cutoff"] = notes.number(model.miller_upper_cutoff, "pole_model.miller_upper_cutoff", reason);
+  out["low"] = time_constants(model.low, "pole_model.low", notes);
+  out["high"] = time_constants(model.high, "pole_model.high", notes);
+  return out;
+}
+
+Json roots(const std::vector<std::complex<double>>& list) {
+  Json out = Json::array();
+  for (const auto& root : list) {
+    if (std::isfinite(root.real()) && std::isfinite(root.imag()))
+      out.push_back({{"real", root.real()}, {"imaginary", root.imag()}});
+  }
+  return out;
+}
+
+Json margins(const Candidate& candidate, const Spec& spec, Notes& notes) {
+  Json out = Json::object();
+  for (const FigureInfo& figure : figures()) {
+    if (!spec.requirement(figure.figure)) continue;
+    out[figure.key] = notes.number(candidate.margins[index(figure.figure)], std::string("margins.") + figure.key,
+                                   "the figure has no value");
+  }
+  return out;
+}
+
+Json shortfalls(const Candidate& candidate, Notes& notes) {
+  Json out = Json::array();
+  for (const Shortfall& one : candidate.shortfalls) {
+    const std::string key = info(one.figure).key;
+    out.push_back({{"figure", key},
+                   {"value", notes.number(one.value, "shortfalls." + key, one.text)},
+                   {"limit", notes.number(one.limit, "shortfalls." + key, one.text)},
+                   {"text", one.text}});
+  }
+  return out;
+}
+
+Json sensitivity(const Candidate& candidate, Notes& notes) {
+  Json out = Json::object();
+  for (const FigureInfo& figure : figures()) {
+    if (!std::isfinite(candidate.analysis.figures[index(figure.figure)])) continue;
+    const auto& row = candidate.sensitivity[index(figure.figure)];
+    const std::string key = shown_key(figure);
+    Json cells = Json::object();
+    for (const Part& one : candidate.parts) {
+      const RoleInfo& role = info(one.role);
+      cells[role.designator] = notes.number(row[index(one.role)], "sensitivity." + key, "no derivative exists");
+    }
+    cells["current_gain"] = notes.number(row[kRoleCount], "sensitivity." + key, "no derivative exists");
+    out[key] = cells;
+  }
+  return out;
+}
+
+Json packages(const Candidate& candidate) {
+  Json out = Json::array();
+  for (const Package& one : candidate.packages)
+    out.push_back({{"package", one.name},
+                   {"lead_order", one.lead_order},
+                   {"note", one.note},
+                   {"provenance", describe(one.provenance)}});
+  return out;
+}
+
+Json candidate_document(const Candidate& candidate, const Spec& spec) {
+  Notes notes(candidate.notes);
+  Json out;
+  out["rank"] = candidate.rank;
+  out["best_at"] = candidate.best_at;
+  out["topology"] = candidate.topology;
+  out["variant"] = candidate.variant;
+  out["device"] = candidate.device;
+  out["device_parameters"] = device_parameters(candidate, notes);
+  out["packages"] = packages(candidate);
+  out["parts"] = parts(candidate, notes);
+  out["figures"] = figures_of(candidate, notes);
+  out["pole_model"] = pole_model(candidate, notes);
+  out["poles"] = roots(candidate.poles.poles);
+  out["zeros"] = roots(candidate.poles.zeros);
+  out["notes"] = nullptr;  // keeps its place; filled last
+  out["error"] = notes.number(candidate.error, "error", "a required figure has no value");
+  out["tolerance_sensitivity"] = notes.number(candidate.tolerance_sensitivity, "tolerance_sensitivity",
+                                              "no requirement to compare with, or a required figure has no value");
+  out["margins"] = margins(candidate, spec, notes);
+  out["shortfalls"] = shortfalls(candidate, notes);
+  out["sensitivity"] = sensitivity(candidate, notes);
+  for (const char* field : kLaterFields) out[field] = notes.nothing(field, kNotInThisVersion);
+  out["notes"] = notes.to_json();
+  return out;
+}
+
+Json caution_list() {
+  Json out = Json::array();
+  for (const Caution& one : cautions()) out.push_back({{"code", one.code}, {"text", one.text}});
+  return out;
+}
+
+}  // namespace
+
+std::string write_json(const DesignResult& result) {
+  Json out;
+  out["format"] = "bandwright/result";
+  out["version"] = kDocumentVersion;
+  out["program"] = version();
+  out["spec"] = Json::parse(write_spec(result.spec));
+  out["met"] = result.met;
+  out["interrupted"] = result.interrupted;
+  out["ranked_by"] = result.ranked_by == RankBy::error ? "error" : "tolerance_sensitivity";
+  out["definitions"] = result.definitions;
+  out["assumptions"] = result.assumptions;
+  out["from_memory"] = result.from_memory;
+  out["dropped"] = result.dropped;
+  out["explanations"] = result.explanations;
+  out["cautions"] = caution_list();
+  out["candidates"] = Json::array();
+  for (const Candidate& one : result.candidates) out["candidates"].push_back(candidate_document(one, result.spec));
+  return out.dump(2, ' ', false, Json::error_handler_t::replace) + "\n";
+}
+
+}  // namespace bandwright

@@ -1,0 +1,75 @@
+#include <fmt/format.h>
+
+#include <bandwright/margins.hpp>
+#include <cmath>
+
+#include "report/sections.hpp"
+#include "report/shown_figures.hpp"
+
+namespace bandwright {
+
+namespace {
+
+std::string error_text(double error) { return error < kWorstError ? fmt::format("{:.3f}", error) : "no value"; }
+
+std::string sensitivity_text(double value) { return std::isfinite(value) ? fmt::format("{:.2f}", value) : "-"; }
+
+std::vector<std::string> row_of(const Candidate& candidate) {
+  const auto plain = [&](Figure figure) {
+    return format_quantity(candidate.analysis.figures[index(figure)], info(figure).dimension);
+  };
+  return {std::to_string(candidate.rank),
+          candidate.shortfalls.empty() ? "yes" : "no",
+          candidate.device,
+          candidate.variant,
+          plain(Figure::gain),
+          plain(Figure::lower_cutoff),
+          plain(Figure::upper_cutoff),
+          error_text(candidate.error),
+          sensitivity_text(candidate.tolerance_sensitivity),
+          plain(Figure::collector_current),
+          candidate.best_at.empty() ? "" : join(candidate.best_at, ", ")};
+}
+
+void add_shortfalls(TextSheet& sheet, const DesignResult& result) {
+  for (const Candidate& candidate : result.candidates)
+    for (const Shortfall& one : candidate.shortfalls) sheet.item(fmt::format("{}: {}", candidate.rank, one.text));
+}
+
+bool any_shortfall(const DesignResult& result) {
+  for (const Candidate& candidate : result.candidates)
+    if (!candidate.shortfalls.empty()) return true;
+  return false;
+}
+
+}  // namespace
+
+void add_ranking(TextSheet& sheet, const DesignResult& result) {
+  if (result.candidates.empty()) return;
+  sheet.heading(result.ranked_by == RankBy::error ? "Candidates, smallest error first"
+                                                  : "Candidates, least sensitive to tolerances first");
+  const auto symbol = [](Figure figure) { return std::string(info(figure).symbol); };
+  TextGrid grid;
+  grid.columns = {{"rank", true},
+                  {"met", false},
+                  {"device", false},
+                  {"variant", false},
+                  {"gain", true},
+                  {symbol(Figure::lower_cutoff), true},
+                  {symbol(Figure::upper_cutoff), true},
+                  {"error", true},
+                  {"tolerance sensitivity", true},
+                  {symbol(Figure::collector_current), true},
+                  {"best at", false}};
+  grid.flexible = grid.columns.size() - 1;
+  for (const Candidate& candidate : result.candidates) grid.add(row_of(candidate));
+  sheet.grid(grid);
+  sheet.line(
+      "error: 0 on every target, 1 at a limit; tolerance sensitivity: 1 where the tolerances, as a root sum of "
+      "squares, fill a window.");
+  if (!any_shortfall(result)) return;
+  sheet.heading("What falls short, by rank");
+  add_shortfalls(sheet, result);
+}
+
+}  // namespace bandwright

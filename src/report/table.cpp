@@ -1,0 +1,74 @@
+// The sheet for people: verdict, what was asked, the ranking, the first candidate in full, what it rests on, cautions.
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <bandwright/report.hpp>
+#include <bandwright/version.hpp>
+
+#include "report/sections.hpp"
+
+namespace bandwright {
+
+namespace {
+
+bool any_requirement(const Spec& spec) {
+  return std::any_of(spec.requirements.begin(), spec.requirements.end(), [](const auto& r) { return r.has_value(); });
+}
+
+std::string verdict_text(const DesignResult& result) {
+  const std::size_t all = result.candidates.size();
+  const auto meeting = std::count_if(result.candidates.begin(), result.candidates.end(),
+                                     [](const Candidate& c) { return c.shortfalls.empty(); });
+  if (all == 0) return "No candidate: no stage meets even the conditions of a working operating point.";
+  if (!any_requirement(result.spec)) return "Recomputed; no requirement was stated.";
+  if (meeting == 0)
+    return all == 1 ? "The candidate does not meet every requirement."
+                    : fmt::format("None of {} candidates meets every requirement; the nearest are listed.", all);
+  if (all == 1) return "The candidate meets every requirement.";
+  return fmt::format("{} of {} candidates {} every requirement.", meeting, all, meeting == 1 ? "meets" : "meet");
+}
+
+void add_verdict(TextSheet& sheet, const DesignResult& result) {
+  if (result.interrupted)
+    sheet.verdict("INTERRUPTED: the search was stopped early; this is the best it had found.", false);
+  sheet.verdict(verdict_text(result), result.met && !result.interrupted);
+  if (!result.spec.title.empty()) sheet.paragraph(result.spec.title);
+}
+
+void add_list(TextSheet& sheet, const std::string& heading, const std::vector<std::string>& items) {
+  if (items.empty()) return;
+  sheet.heading(heading);
+  for (const std::string& item : items) sheet.item(item);
+}
+
+void add_cautions(TextSheet& sheet) {
+  sheet.heading("Before building");
+  sheet.line(
+      "At most 60 V DC between any two nodes, from a battery or a certified isolated supply; mind polarity and rating; "
+      "eye protection at first power-up; discharge before touching; parts may be hot.");
+  sheet.line(
+      "A paper design, to be built and measured; not for medical or safety use; local codes and licensed practice come "
+      "first. In full: README.md, section Cautions, and --format json.");
+}
+
+}  // namespace
+
+std::string write_table(const DesignResult& result, const TableStyle& style) {
+  TextSheet sheet(style);
+  add_verdict(sheet, result);
+  if (!result.met) add_list(sheet, "Why", result.explanations);
+  add_asked_for(sheet, result.spec);
+  add_ranking(sheet, result);
+  if (!result.candidates.empty()) add_candidate(sheet, result.candidates.front(), result.spec);
+  add_list(sheet, "Definitions in force", result.definitions);
+  add_list(sheet, "Assumptions", result.assumptions);
+  add_list(sheet, "Figures from memory", result.from_memory);
+  add_list(sheet, "Transistors left out", result.dropped);
+  if (result.met) add_list(sheet, "Explanations", result.explanations);
+  add_cautions(sheet);
+  sheet.space();
+  sheet.paragraph(std::string("bandwright ") + version());
+  return sheet.text();
+}
+
+}  // namespace bandwright

@@ -1,0 +1,78 @@
+#include "search/design_space.hpp"
+
+#include <algorithm>
+#include <cmath>
+
+namespace bandwright {
+
+namespace {
+
+/// A pinned part decides which variants are left: pinned to 0 the role must be absent, to a value present.
+bool fits_pins(const Variant& variant, const Spec& spec) {
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    const auto& pin = spec.parts.pinned[i];
+    if (pin && (*pin > 0) != variant.present[i]) return false;
+  }
+  return true;
+}
+
+int nearest(const std::vector<OfferedValue>& offered, double value) {
+  const auto above = std::lower_bound(offered.begin(), offered.end(), value,
+                                      [](const OfferedValue& o, double v) { return o.working_value < v; });
+  if (above == offered.begin()) return 0;
+  if (above == offered.end()) return static_cast<int>(offered.size()) - 1;
+  const auto below = above - 1;
+  const bool lower = value * value < above->working_value * below->working_value;
+  return static_cast<int>((lower ? below : above) - offered.begin());
+}
+
+}  // namespace
+
+DesignSpaces design_spaces(const Spec& spec, const Catalogue& catalogue, const std::vector<DerivedDevice>& devices) {
+  DesignSpaces all;
+  for (const RoleInfo& r : roles()) {
+    const auto& pin = spec.parts.pinned[index(r.role)];
+    if (!(pin && *pin == 0)) all.offered[index(r.role)] = offered_values(catalogue, spec, r.role);
+  }
+  for (std::size_t d = 0; d < devices.size(); ++d) {
+    for (const Variant& v : variants()) {
+      if (!fits_pins(v, spec)) continue;
+      DesignSpace space{d, &devices[d], &v, {}};
+      bool complete = true;
+      for (std::size_t i = 0; i < kRoleCount; ++i) {
+        if (!v.present[i]) continue;
+        complete = complete && !all.offered[i].empty();
+        space.offered[i] = &all.offered[i];
+      }
+      if (complete) all.spaces.push_back(space);
+    }
+  }
+  return all;
+}
+
+PartValues working_values(const DesignSpace& space, const GridPoint& point) {
+  PartValues v{};
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (space.has(i)) v[i] = space.at(i, point).working_value;
+  }
+  return v;
+}
+
+OfferedParts offered_parts(const DesignSpace& space, const GridPoint& point) {
+  OfferedParts parts;
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (space.has(i)) parts[i] = space.at(i, point);
+  }
+  return parts;
+}
+
+GridPoint snap(const DesignSpace& space, const PartValues& values) {
+  GridPoint p;
+  p.fill(-1);
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (space.has(i)) p[i] = static_cast<std::int16_t>(nearest(*space.offered[i], values[i]));
+  }
+  return p;
+}
+
+}  // namespace bandwright

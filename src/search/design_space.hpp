@@ -1,0 +1,45 @@
+// The design space of one device in one variant: the offered values in each role.
+#pragma once
+
+#include <array>
+#include <cstdint>
+#include <vector>
+
+#include <bandwright/catalogue.hpp>
+#include <bandwright/device.hpp>
+#include <bandwright/purchase.hpp>
+#include <bandwright/stage.hpp>
+
+namespace bandwright {
+
+/// A point on the grid: an index into the offered values of each role; -1 where the role is absent.
+using GridPoint = std::array<std::int16_t, kRoleCount>;
+
+/// One device in one variant.
+struct DesignSpace {
+  std::size_t device_index = 0;
+  const DerivedDevice* device = nullptr;
+  const Variant* variant = nullptr;
+  std::array<const std::vector<OfferedValue>*, kRoleCount> offered{};  ///< nullptr: absent
+
+  bool has(std::size_t role) const { return offered[role] != nullptr; }
+  bool is_free(std::size_t role) const { return has(role) && offered[role]->size() > 1; }
+  const OfferedValue& at(std::size_t role, const GridPoint& p) const { return (*offered[role])[p[role]]; }
+};
+
+/// Every offered value of a spec, and the spaces that the variants make of them. Holds what the spaces point to.
+struct DesignSpaces {
+  std::array<std::vector<OfferedValue>, kRoleCount> offered;
+  std::vector<DesignSpace> spaces;
+};
+
+DesignSpaces design_spaces(const Spec& spec, const Catalogue& catalogue, const std::vector<DerivedDevice>& devices);
+
+/// The values at work; 0 where absent.
+PartValues working_values(const DesignSpace& space, const GridPoint& point);
+OfferedParts offered_parts(const DesignSpace& space, const GridPoint& point);
+
+/// The nearest offered value, by ratio, in each role.
+GridPoint snap(const DesignSpace& space, const PartValues& values);
+
+}  // namespace bandwright

@@ -1,0 +1,16 @@
+// The rows of the table of fields, by what they speak of.
+#pragma once
+
+#include <vector>
+
+#include "spec/field.hpp"
+
+namespace bandwright {
+
+std::vector<Field> circuit_fields();      ///< title, supply, source, load, stray, ambient
+std::vector<Field> requirement_fields();  ///< requirements
+std::vector<Field> part_fields();         ///< parts: rules, ranges, pinned
+std::vector<Field> search_fields();       ///< devices, topologies, search
+std::vector<Field> later_fields();        ///< keys of the format that this version accepts at their default only
+
+}  // namespace bandwright

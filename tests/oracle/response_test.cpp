@@ -1,0 +1,109 @@
+// Exact response against the nodal solve, on random circuits over the whole range of parts and devices.
+//
+// The small-signal parameters are the library's own, so that this check does not hang on the operating point
+// (bias_test.cpp). Truth: nodal solve in long double; where it and the library part by more than the solve's own error,
+// the same network in fifty digits.
+#include <fmt/format.h>
+
+#include <cmath>
+#include <iostream>
+
+#include "agreement.hpp"
+#include "catch.hpp"
+#include "fifty_digits.hpp"
+#include "nodal.hpp"
+#include "random_circuits.hpp"
+
+using namespace oracle;
+using bandwright::Analysis;
+using bandwright::BiasState;
+
+namespace {
+
+constexpr double kResponse = 1e-9;     // |H| and gain: the definition of the exact response
+constexpr double kCutoff = 1e-7;       // both cutoffs: the same
+constexpr double kSolveError = 1e-11;  // long double is trusted to here, beyond it fifty digits decide
+constexpr Real kSmallest = 1e-200L;    // |H| below this says nothing
+
+constexpr int kCircuits = 2500;  // a quarter
+constexpr int kAtLeast = 150;    // of each special case in a quarter
+constexpr int kFrequencies = 15;
+
+struct Quarter {
+  Census census;
+  Agreement response{"|H|"}, gain{"gain"}, lower{"lower cutoff"}, upper{"upper cutoff"};
+  int presence = 0, judged = 0, no_upper = 0, rising = 0;
+  std::string where;
+};
+
+double judge(const Network& net, Real frequency, double value, Real solved, int& judged) {
+  const double difference = relative_difference(value, static_cast<double>(solved));
+  if (difference <= kSolveError) return difference;
+  ++judged;
+  return relative_difference(value, static_cast<double>(magnitude_in_fifty_digits(net, output, frequency)));
+}
+
+void compare_response(const Network& net, const Analysis& a, const std::string& name, Quarter& q) {
+  for (int i = 0; i < kFrequencies; ++i) {
+    const Real f = std::pow(10.0L, -3 + 13 * Real(i) / (kFrequencies - 1));
+    const Real solved = magnitude(net, f);
+    if (solved < kSmallest) continue;
+    const double value = std::abs(a.transfer.at(static_cast<double>(f)));
+    q.response.add(judge(net, static_cast<double>(f), value, solved, q.judged),
+                   fmt::format("{} at {} Hz", name, double(f)));
+  }
+}
+
+void compare_cutoff(double value, std::optional<Real> solved, const std::string& name, Agreement& agreement,
+                    Quarter& q) {
+  if (std::isnan(value) == solved.has_value()) {
+    ++q.presence;
+    q.where += fmt::format("{}: {} against {}\n", name, value, solved ? double(*solved) : NAN);
+  } else if (solved) {
+    agreement.add(relative_difference(value, static_cast<double>(*solved)), name);
+  }
+}
+
+void compare(const RandomCircuit& c, const Analysis& a, const std::string& name, Quarter& q) {
+  const Network net = network({widen(c.stage.parts), widen(a.small), c.stage.around, c.definition.from_input});
+  compare_response(net, a, name, q);
+  const Edges e = edges(net, c.definition.frequency);
+  q.gain.add(judge(net, e.reference, a.band.gain, e.gain, q.judged), name);
+  compare_cutoff(a.band.lower, e.lower, name + " lower", q.lower, q);
+  compare_cutoff(a.band.upper, e.upper, name + " upper", q.upper, q);
+  q.no_upper += !e.upper;
+  q.rising += e.rises_to_the_end;
+}
+
+void check_quarter(std::uint64_t seed) {
+  CircuitSource source(seed);
+  Quarter q;
+  for (int drawn = 0; q.census.circuits < kCircuits; ++drawn) {
+    const RandomCircuit c = source.next();
+    const Analysis a = analyse(c.stage, c.definition);
+    if (a.point.state != BiasState::active) continue;
+    q.census.count(c);
+    compare(c, a, fmt::format("seed {} circuit {}", seed, drawn), q);
+  }
+  std::cout << "response, seed " << seed << ": " << q.census.circuits << " circuits, " << q.no_upper
+            << " without an upper cutoff, " << q.rising << " rising to the end, " << q.judged
+            << " values judged in fifty digits\n";
+  for (const Agreement* a : {&q.response, &q.gain, &q.lower, &q.upper}) {
+    std::cout << "  " << a->summary() << "\n";
+    INFO(a->summary() << " in " << a->worst_where());
+    CHECK(a->worst() <= (a == &q.response || a == &q.gain ? kResponse : kCutoff));
+  }
+  INFO(q.where);
+  CHECK(q.presence == 0);
+  for (const auto& [name, count] : q.census.rows()) {
+    INFO(name);
+    CHECK(count >= kAtLeast);
+  }
+}
+
+}  // namespace
+
+TEST_CASE("exact response against a nodal solve: first quarter", "[oracle][response]") { check_quarter(1001); }
+TEST_CASE("exact response against a nodal solve: second quarter", "[oracle][response]") { check_quarter(1002); }
+TEST_CASE("exact response against a nodal solve: third quarter", "[oracle][response]") { check_quarter(1003); }
+TEST_CASE("exact response against a nodal solve: fourth quarter", "[oracle][response]") { check_quarter(1004); }

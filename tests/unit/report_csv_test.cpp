@@ -1,0 +1,106 @@
+// Comma-separated values, read back by a small reader of its own that follows RFC 4180 to the letter.
+#include <bandwright/report.hpp>
+#include <cmath>
+#include <stdexcept>
+
+#include "catch.hpp"
+#include "sample_result.hpp"
+
+using namespace bandwright;
+
+namespace {
+
+using Record = std::vector<std::string>;
+
+// RFC 4180: records end with CRLF; a field in quotes may hold anything, a quote doubled.
+std::vector<Record> read_records(const std::string& text) {
+  std::vector<Record> records(1, Record(1));
+  bool quoted = false;
+  for (std::size_t i = 0; i < text.size(); ++i) {
+    std::string& field = records.back().back();
+    const char c = text[i];
+    if (quoted && c == '"' && i + 1 < text.size() && text[i + 1] == '"') {
+      field += '"';
+      ++i;
+    } else if (c == '"') {
+      if (!quoted && !field.empty()) throw std::runtime_error("a quote inside a bare field");
+      quoted = !quoted;
+    } else if (quoted) {
+      field += c;
+    } else if (c == ',') {
+      records.back().emplace_back();
+    } else if (c == '\r' && i + 1 < text.size() && text[i + 1] == '\n') {
+      records.emplace_back(1);
+      ++i;
+    } else if (c == '\r' || c == '\n') {
+      throw std::runtime_error("a line end that is not CRLF");
+    } else {
+      field += c;
+    }
+  }
+  if (quoted) throw std::runtime_error("a quote that is never closed");
+  if (records.back() != Record(1)) throw std::runtime_error("the last record has no line end");
+  records.pop_back();
+  return records;
+}
+
+std::size_t column(const Record& headings, const std::string& name) {
+  for (std::size_t i = 0; i < headings.size(); ++i)
+    if (headings[i] == name) return i;
+  throw std::runtime_error("no column " + name);
+}
+
+}  // namespace
+
+TEST_CASE("columns stand in the order of the format") {
+  const Record headings = read_records(write_csv(test::sample_result())).front();
+  const Record first = {"rank", "device",       "variant",     "error", "tolerance_sensitivity",
+                        "gain", "lower_cutoff", "upper_cutoff"};
+  const Record last = {"R1", "R2", "R3", "R4", "R5", "C1", "C2", "C3", "C4"};
+  REQUIRE(headings.size() > first.size() + last.size());
+  CHECK(std::equal(first.begin(), first.end(), headings.begin()));
+  CHECK(std::equal(last.rbegin(), last.rend(), headings.rbegin()));
+  CHECK(headings[column(headings, "junction_temperature_degc")] == "junction_temperature_degc");
+  for (const char* later : {"cost", "noise_figure"})
+    CHECK(std::find(headings.begin(), headings.end(), later) == headings.end());
+}
+
+TEST_CASE("each candidate is one record with as many fields as headings") {
+  const auto records = read_records(write_csv(test::sample_result()));
+  REQUIRE(records.size() == 3);
+  for (const Record& record : records) CHECK(record.size() == records[0].size());
+  CHECK(records[2][0] == "2");
+}
+
+TEST_CASE("numbers read back as the same doubles; what is absent is empty") {
+  const DesignResult result = test::sample_result();
+  const auto records = read_records(write_csv(result));
+  const auto cell = [&](const std::string& name) { return records[1][column(records[0], name)]; };
+  CHECK(std::stod(cell("error")) == 0.1 + 0.2);
+  CHECK(std::stod(cell("gain")) == result.candidates[0].analysis.figures[index(Figure::gain)]);
+  CHECK(std::stod(cell("R1")) == 47e3);
+  CHECK(std::stod(cell("C2")) == 4.7e-6);
+  CHECK(cell("C4").empty());
+}
+
+TEST_CASE("a figure without a value is an empty field") {
+  DesignResult result = test::sample_result();
+  result.candidates[0].analysis.figures[index(Figure::upper_cutoff)] = kNotComputed;
+  result.candidates[0].tolerance_sensitivity = std::numeric_limits<double>::infinity();
+  const auto records = read_records(write_csv(result));
+  CHECK(records[1][column(records[0], "upper_cutoff")].empty());
+  CHECK(records[1][column(records[0], "tolerance_sensitivity")].empty());
+}
+
+TEST_CASE("commas, quotes and line ends inside a field survive") {
+  DesignResult result = test::sample_result();
+  const std::string odd = "type \"X\", second\r\nline";
+  result.candidates[0].device = odd;
+  CHECK(read_records(write_csv(result))[1][1] == odd);
+}
+
+TEST_CASE("an empty list is a heading alone") {
+  DesignResult result = test::sample_result();
+  result.candidates.clear();
+  CHECK(read_records(write_csv(result)).size() == 1);
+}

@@ -1,0 +1,147 @@
+// The sheet for people: what must stand on it, and where.
+#include <bandwright/report.hpp>
+
+#include "catch.hpp"
+#include "report/text_sheet.hpp"
+#include "sample_result.hpp"
+
+using namespace bandwright;
+using Catch::Matchers::ContainsSubstring;
+using Catch::Matchers::StartsWith;
+
+namespace {
+
+std::vector<std::string> lines_of(const std::string& text) {
+  std::vector<std::string> lines(1);
+  for (const char c : text) {
+    if (c == '\n')
+      lines.emplace_back();
+    else
+      lines.back() += c;
+  }
+  return lines;
+}
+
+std::size_t widest(const std::string& text) {
+  std::size_t width = 0;
+  for (const auto& line : lines_of(text)) width = std::max(width, text_width(line));
+  return width;
+}
+
+}  // namespace
+
+TEST_CASE("the verdict stands first") {
+  DesignResult result = test::sample_result();
+  CHECK_THAT(write_table(result), StartsWith("1 of 2 candidates meets every requirement.\n"));
+  result.candidates[0].shortfalls = result.candidates[1].shortfalls;
+  result.met = false;
+  CHECK_THAT(write_table(result), StartsWith("None of 2 candidates meets every requirement"));
+}
+
+TEST_CASE("an interrupted search says so before all else") {
+  DesignResult result = test::sample_result();
+  result.interrupted = true;
+  CHECK_THAT(write_table(result), StartsWith("INTERRUPTED"));
+}
+
+TEST_CASE("an empty list gives its reason and still the cautions") {
+  DesignResult result = test::sample_result();
+  result.candidates.clear();
+  result.met = false;
+  result.explanations = {"IC RC would be 0.2 V, needs 0.5 V"};
+  const std::string text = write_table(result);
+  CHECK_THAT(text, StartsWith("No candidate"));
+  CHECK_THAT(text, ContainsSubstring("IC RC would be 0.2 V, needs 0.5 V"));
+  CHECK_THAT(text, ContainsSubstring("60 V DC"));
+}
+
+TEST_CASE("one candidate and no requirement is a recomputation") {
+  DesignResult result = test::sample_result();
+  result.candidates.pop_back();
+  CHECK_THAT(write_table(result), StartsWith("The candidate meets every requirement."));
+  result.spec.requirements = {};
+  CHECK_THAT(write_table(result), StartsWith("Recomputed; no requirement was stated."));
+}
+
+TEST_CASE("requirements are shown as they were understood") {
+  const std::string text = write_table(test::sample_result());
+  CHECK_THAT(text, ContainsSubstring("44.6 to 56.1"));
+  CHECK_THAT(text, ContainsSubstring("at most 50 Hz"));
+  CHECK_THAT(text, ContainsSubstring("at least 20 kHz"));
+  CHECK_THAT(text, ContainsSubstring("11.4 V to 12.6 V"));
+  CHECK_THAT(text, ContainsSubstring("Tide gauge preamplifier"));
+}
+
+TEST_CASE("each shortfall is named with its rank") {
+  CHECK_THAT(write_table(test::sample_result()), ContainsSubstring("2: upper cutoff: 18 kHz, needs at least 20 kHz"));
+}
+
+TEST_CASE("the parts list shows what is needed to buy and fit each part") {
+  const std::string text = write_table(test::sample_result(), {false, 200});
+  for (const char* piece : {"R1", "upper divider", "47 kΩ", "47K", "E6", "±10 %", "-20/+50 %", "metal film resistor",
+                            "0.25 W", "63 V", "+ to collector", "TO-92", "C-B-E (1-2-3)"})
+    CHECK_THAT(text, ContainsSubstring(piece));
+}
+
+TEST_CASE("the pole model names who sets each cutoff, largest share first") {
+  CHECK_THAT(write_table(test::sample_result(), {false, 200}),
+             ContainsSubstring("Who sets fL: C3 bypass 75 % (17.68 Hz), C1 input coupling 25 % (28.42 Hz)"));
+}
+
+TEST_CASE("hints say that they are common practice") {
+  CHECK_THAT(write_table(test::sample_result()), ContainsSubstring("common practice, no source"));
+}
+
+TEST_CASE("what the result rests on is listed") {
+  const std::string text = write_table(test::sample_result());
+  for (const char* piece : {"gain: source EMF to load", "ambient 25 °C only", "from memory", "BFR92A"})
+    CHECK_THAT(text, ContainsSubstring(piece));
+}
+
+TEST_CASE("the sheet ends with cautions in two lines and where the rest stands") {
+  const auto lines = lines_of(write_table(test::sample_result(), {false, 240}));
+  const auto heading = std::find(lines.begin(), lines.end(), "Before building");
+  REQUIRE(heading != lines.end());
+  CHECK_THAT(*(heading + 1), ContainsSubstring("60 V DC") && ContainsSubstring("isolated") &&
+                                 ContainsSubstring("polarity") && ContainsSubstring("eye protection"));
+  CHECK_THAT(*(heading + 2), ContainsSubstring("medical") && ContainsSubstring("README.md"));
+}
+
+TEST_CASE("a narrow band shows the idealised midband gain and the definition") {
+  DesignResult result = test::sample_result();
+  CHECK_THAT(write_table(result), !ContainsSubstring("Narrow band"));
+  result.candidates[0].analysis.figures[index(Figure::upper_cutoff)] = 8 * 41.7;
+  const std::string text = write_table(result, {false, 400});
+  CHECK_THAT(text, ContainsSubstring("Narrow band, fH/fL = 8") && ContainsSubstring("49.9"));
+  CHECK_THAT(text, ContainsSubstring(info(Figure::gain).definition));
+}
+
+TEST_CASE("colour appears only where it is asked for, and is never the only signal") {
+  const DesignResult result = test::sample_result();
+  const std::string plain = write_table(result, {false, 100});
+  std::string coloured = write_table(result, {true, 100});
+  CHECK(plain.find('\x1b') == std::string::npos);
+  REQUIRE(coloured.find('\x1b') != std::string::npos);
+  for (std::size_t at = 0; (at = coloured.find('\x1b')) != std::string::npos;)
+    coloured.erase(at, coloured.find('m', at) - at + 1);
+  CHECK(coloured == plain);
+}
+
+TEST_CASE("a page is as wide as it is told, as far as its words allow") {
+  const DesignResult result = test::sample_result();
+  CHECK(widest(write_table(result, {false, 140})) <= 140);
+  CHECK(widest(write_table(result, {false, 400})) > 140);
+}
+
+TEST_CASE("a candidate without a value shows none, and its reason") {
+  DesignResult result = test::sample_result();
+  Candidate& c = result.candidates[0];
+  c.analysis.figures.fill(kNotComputed);
+  c.margins.fill(kNotComputed);
+  c.error = kWorstError;
+  c.notes["gain"] = "not active: VCE would be 0.1 V, needs 0.5 V";
+  const std::string text = write_table(result, {false, 200});
+  CHECK_THAT(text, ContainsSubstring("no value"));
+  CHECK_THAT(text, ContainsSubstring("VCE would be 0.1 V, needs 0.5 V"));
+  CHECK_THAT(text, !ContainsSubstring("nan"));
+}
