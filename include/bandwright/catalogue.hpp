@@ -142,7 +142,7 @@ struct OfferedValue {
   const Series* series = nullptr;  ///< coarsest series that holds it; nullptr: none
 };
 
-/// The values offered for a role under a spec's rules, rising; one value where it is pinned.
+/// The values offered for a role under a spec's rules, rising by working value; one value where it is pinned.
 /// A capacitor comes from the family that is first choice at its value. The result points into `catalogue`.
 std::vector<OfferedValue> offered_values(const Catalogue& catalogue, const Spec& spec, Role role);
 

@@ -67,7 +67,9 @@ void check_family(const std::string& key, const std::string& where, const Catalo
 void check_rules(const PartRules& rules, PartKind kind, const Catalogue& catalogue, std::vector<Fault>& faults) {
   const std::string parts = std::string("parts.") + plural(kind);
   for (std::size_t i = 0; i < rules.families.size(); ++i) {
-    check_family(rules.families[i], parts + ".families[" + std::to_string(i) + "]", catalogue, kind, faults);
+    // A spec names one family of resistors, several of capacitors.
+    const std::string key = kind == PartKind::resistor ? ".family" : ".families[" + std::to_string(i) + "]";
+    check_family(rules.families[i], parts + key, catalogue, kind, faults);
   }
   if (!rules.series.empty() && find_series(rules.series) == nullptr) {
     std::vector<std::string> names;

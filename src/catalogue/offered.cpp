@@ -84,6 +84,9 @@ std::vector<OfferedValue> offered_values(const Catalogue& catalogue, const Spec&
     const OfferedFamily* from = choice.at(value);
     if (from != nullptr && in_family_series(*from->family, rules, value)) offered.push_back(offer(*from, value, spec));
   }
+  // In deep cold the smallest electrolytic may work below the largest film capacitor.
+  std::stable_sort(offered.begin(), offered.end(),
+                   [](const OfferedValue& x, const OfferedValue& y) { return x.working_value < y.working_value; });
   return offered;
 }
 

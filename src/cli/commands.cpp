@@ -27,7 +27,7 @@ const OptionGroup& program_options() {
 
 void add_options(TextSheet& sheet, const OptionGroup& group) {
   sheet.heading(group.heading);
-  TextGrid grid{{{"", false}, {"", false}}, {}, 1};
+  TextGrid grid{{{"", false}, {"", false}}, {}, {1}};
   for (const Option& option : group.options) {
     std::string form = option.letter == 0 ? "    " : fmt::format("-{}, ", option.letter);
     form += "--" + option.name;
@@ -39,7 +39,7 @@ void add_options(TextSheet& sheet, const OptionGroup& group) {
 
 void add_statuses(TextSheet& sheet) {
   sheet.heading("Exit status");
-  TextGrid grid{{{"", false}, {"", false}}, {}, 1};
+  TextGrid grid{{{"", false}, {"", false}}, {}, {1}};
   grid.add({"0", "a candidate meets every requirement nominally"});
   grid.add({"1", "none does: the nearest are printed, each shortfall named"});
   grid.add({"2", "the input or the command line is wrong"});
@@ -124,7 +124,7 @@ std::string overall_help() {
   sheet.heading("Use");
   sheet.line("bandwright COMMAND [OPERANDS] [OPTIONS]");
   sheet.heading("Commands");
-  TextGrid grid{{{"", false}, {"", false}}, {}, 1};
+  TextGrid grid{{{"", false}, {"", false}}, {}, {1}};
   for (const Command& command : commands())
     grid.add({fmt::format("{} {}", command.name, command.operands), command.summary});
   grid.add({"help [COMMAND]", "this text, or all about one command"});

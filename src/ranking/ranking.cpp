@@ -3,7 +3,6 @@
 #include <algorithm>
 #include <cmath>
 #include <limits>
-#include <set>
 #include <tuple>
 
 #include "numeric/elementary.hpp"
@@ -41,11 +40,12 @@ int leading_class(double error, RankBy by) {
 }
 
 int distinct_values(const PartValues& values) {
-  std::set<std::pair<bool, double>> seen;
+  int count = 0;
   for (std::size_t i = 0; i < values.size(); ++i) {
-    if (values[i] > 0) seen.emplace(i < kResistorRoles, values[i]);
+    const auto kind = values.begin() + (i < kResistorRoles ? 0 : kResistorRoles);
+    count += values[i] > 0 && std::find(kind, values.begin() + i, values[i]) == values.begin() + i;
   }
-  return static_cast<int>(seen.size());
+  return count;
 }
 
 bool comes_before(const RankKey& a, const RankKey& b, RankBy by) {

@@ -11,7 +11,7 @@ namespace {
 
 // A grid of two columns without headings.
 struct NamedLines {
-  TextGrid grid{{{"", false}, {"", false}}, {}, 1};
+  TextGrid grid{{{"", false}, {"", false}}, {}, {1}};
   void add(const std::string& name, const std::string& text) { grid.add({name, text}); }
 };
 
@@ -24,16 +24,19 @@ std::string condition_text(const Condition& condition, Dimension dimension) {
 
 std::string dc_text(double dc) { return dc == 0 ? "" : ", at " + format_quantity(dc, Dimension::voltage) + " DC"; }
 
+std::string shunted(const std::string& resistance, double capacitance) {
+  if (capacitance == 0) return resistance;
+  return resistance + " with " + format_quantity(capacitance, Dimension::capacitance) + " to ground";
+}
+
 std::string source_text(const Source& source) {
-  return format_quantity(source.resistance, Dimension::resistance) + ", " +
-         format_quantity(source.capacitance, Dimension::capacitance) + " to ground" + dc_text(source.dc);
+  return shunted(format_quantity(source.resistance, Dimension::resistance), source.capacitance) + dc_text(source.dc);
 }
 
 std::string load_text(const Load& load) {
   const std::string resistance =
       load.conductance > 0 ? format_quantity(1 / load.conductance, Dimension::resistance) : "open";
-  return resistance + ", " + format_quantity(load.capacitance, Dimension::capacitance) + " to ground" +
-         dc_text(load.dc);
+  return shunted(resistance, load.capacitance) + dc_text(load.dc);
 }
 
 std::string stray_text(const Stray& stray) {
@@ -75,7 +78,7 @@ void add_role_rules(NamedLines& lines, const Parts& parts) {
 }
 
 void add_requirements(TextSheet& sheet, const Spec& spec) {
-  TextGrid grid{{{"figure", false}, {"target", true}, {"accepted", false}, {"taken", false}}, {}, 2};
+  TextGrid grid{{{"figure", false}, {"target", true}, {"accepted", false}, {"taken", false}}, {}, {2}};
   for (const FigureInfo& figure : figures()) {
     const auto& requirement = spec.requirement(figure.figure);
     if (!requirement) continue;

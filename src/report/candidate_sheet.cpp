@@ -15,16 +15,18 @@ constexpr double kNarrowBand = 30;
 
 std::string quantity(double value, Dimension dimension) { return format_quantity(value, dimension); }
 
-// "0.25 W for 12 mW, 250 V": the rating, and the highest nominal stress it stands above.
+// What the part must stand: a resistor's power, a capacitor's voltage.
 std::string rating_text(const Part& part) {
-  const auto row = [](double rating, double stress, Dimension dimension) {
-    const std::string rated = std::isfinite(rating) ? format_quantity(rating, dimension) : "no rating";
-    return rated + " for " + format_quantity(std::fabs(stress), dimension, 3);
-  };
-  std::vector<std::string> words;
-  if (part.power_rating != 0) words.push_back(row(part.power_rating, part.watts, Dimension::power));
-  if (part.voltage_rating != 0) words.push_back(row(part.voltage_rating, part.volts, Dimension::voltage));
-  return join(words, ", ");
+  const bool resistor = info(part.role).kind == PartKind::resistor;
+  const double rating = resistor ? part.power_rating : part.voltage_rating;
+  if (!std::isfinite(rating)) return "none holds";
+  return rating == 0 ? "" : quantity(rating, resistor ? Dimension::power : Dimension::voltage);
+}
+
+// "metal film": the designator says already what kind of part it is.
+std::string short_family(const Part& part) {
+  const std::string kind = info(part.role).kind == PartKind::resistor ? " resistor" : " capacitor";
+  return part.family.ends_with(kind) ? part.family.substr(0, part.family.size() - kind.size()) : part.family;
 }
 
 std::vector<std::string> part_row(const Part& part) {
@@ -36,9 +38,8 @@ std::vector<std::string> part_row(const Part& part) {
           part.code,
           part.series.empty() ? "none" : part.series,
           tolerance_text(part.tolerance),
-          part.family,
+          short_family(part),
           rating_text(part),
-          part.nodes[0] + " - " + part.nodes[1],
           part.polarity};
 }
 
@@ -46,15 +47,20 @@ void add_parts(TextSheet& sheet, const Candidate& candidate) {
   sheet.heading("Parts");
   TextGrid grid;
   grid.columns = {{"part", false},      {"role", false},   {"value", true},   {"code", false},    {"series", false},
-                  {"tolerance", false}, {"family", false}, {"rating", false}, {"between", false}, {"polarity", false}};
-  grid.flexible = 6;
+                  {"tolerance", false}, {"family", false}, {"rating", false}, {"polarity", false}};
+  grid.flexible = {6, 1, 8};
   for (const Part& part : candidate.parts) grid.add(part_row(part));
-  grid.add({"Q1", "transistor", candidate.device, "", "", "", candidate.parameters.pnp ? "PNP" : "NPN", "", "", ""});
+  grid.add({"Q1", "transistor", candidate.device, "", "", "", candidate.parameters.pnp ? "PNP" : "NPN", "", ""});
   sheet.grid(grid);
   for (const Package& one : candidate.packages) {
     const std::string note = one.note.empty() ? "" : "; " + one.note;
     sheet.line(fmt::format("Q1 in {}: leads {}{} ({})", one.name, one.lead_order, note, describe(one.provenance)));
   }
+}
+
+std::string margin_text(double margin) {
+  if (!std::isfinite(margin)) return "-";
+  return fmt::format("{:.{}f}{}", margin, std::fabs(margin) < 10 ? 2 : 0, margin < 0 ? " short" : "");
 }
 
 std::vector<std::string> figure_row(const Candidate& candidate, const FigureInfo& figure, const Spec& spec) {
@@ -64,7 +70,7 @@ std::vector<std::string> figure_row(const Candidate& candidate, const FigureInfo
   if (requirement) {
     asked = window_text(*requirement, figure);
     const double value = candidate.margins[index(figure.figure)];
-    margin = std::isfinite(value) ? fmt::format("{:.2f}{}", value, value < 0 ? " short" : "") : "-";
+    margin = margin_text(value);
   }
   return {figure.label, figure.symbol, figure_text(candidate, figure), asked, margin};
 }
@@ -82,7 +88,8 @@ bool is_operating_point(Figure figure) {
 
 void add_figures(TextSheet& sheet, const Candidate& candidate, const Spec& spec) {
   sheet.heading("Figures beside what was asked (margin: 1 on the target, 0 at the limit)");
-  TextGrid grid{{{"figure", false}, {"symbol", false}, {"value", true}, {"accepted", false}, {"margin", false}}, {}, 0};
+  TextGrid grid{
+      {{"figure", false}, {"symbol", false}, {"value", true}, {"accepted", false}, {"margin", false}}, {}, {0}};
   for (const bool required : {true, false}) {
     for (const FigureInfo& figure : figures()) {
       if (figure.use == FigureUse::reserved || bool(spec.requirement(figure.figure)) != required) continue;
@@ -103,16 +110,16 @@ void add_figures(TextSheet& sheet, const Candidate& candidate, const Spec& spec)
 
 void add_operating_point(TextSheet& sheet, const Candidate& candidate) {
   sheet.heading("Operating point");
-  TextGrid grid{{{"", false}, {"", false}, {"", true}, {"", false}}, {}, 3};
+  TextGrid grid{{{"", false}, {"", false}, {"value", true}, {"usual (common practice, no source)", false}}, {}, {3}};
   const std::map<Figure, std::string> usual = {
-      {Figure::collector_emitter_share, "usually near half"},
-      {Figure::emitter_voltage_share, "usually about a tenth, or 1 V"},
-      {Figure::divider_current_ratio, "usually about 10"},
+      {Figure::collector_emitter_share, "near half"},
+      {Figure::emitter_voltage_share, "about a tenth, or 1 V"},
+      {Figure::divider_current_ratio, "about 10"},
   };
   for (const Figure figure : kOperatingPoint) {
     const auto hint = usual.find(figure);
-    const std::string text = hint == usual.end() ? "" : hint->second + ": common practice, no source";
-    grid.add({info(figure).label, info(figure).symbol, figure_text(candidate, info(figure)), text});
+    grid.add({info(figure).label, info(figure).symbol, figure_text(candidate, info(figure)),
+              hint == usual.end() ? "" : hint->second});
   }
   sheet.grid(grid);
 }
@@ -131,12 +138,12 @@ std::string shares_text(const std::vector<TimeConstant>& constants) {
 void add_pole_model(TextSheet& sheet, const Candidate& candidate) {
   const PoleModel& model = candidate.poles_estimate;
   sheet.heading("Pole model beside the exact response");
-  TextGrid grid{{{"", false}, {"exact", true}, {"estimate", true}, {"how", false}}, {}, 3};
+  TextGrid grid{{{"", false}, {"exact", true}, {"estimate", true}, {"how", false}}, {}, {3}};
   const auto row = [&](Figure figure, double estimate, const std::string& how) {
     grid.add({info(figure).label, figure_text(candidate, info(figure)), figure_text(estimate, info(figure)), how});
   };
   row(Figure::gain, model.midband_gain, "resistive midband network");
-  row(Figure::gain, model.textbook_gain, "hfe R'L/hie, divided by F where the emitter is split, and by the source");
+  row(Figure::gain, model.textbook_gain, "hfe R'L/hie, over F, times Rin/(Rin + RS)");
   row(Figure::lower_cutoff, model.lower_cutoff, "sum of the short-circuit corner frequencies");
   row(Figure::upper_cutoff, model.upper_cutoff, "sum of the open-circuit time constants");
   row(Figure::upper_cutoff, model.miller_upper_cutoff, "input pole alone, Miller form");
@@ -167,6 +174,20 @@ void add_roots(TextSheet& sheet, const Candidate& candidate) {
   sheet.item("Zeros, s/2π: " + roots_text(candidate.poles.zeros));
 }
 
+// Figures of later versions go without saying here, and the narrow band has a line of its own.
+bool is_silent(const std::string& field) {
+  const auto figure = find_figure(field);
+  return figure && (*figure == Figure::midband_gain || info(*figure).use == FigureUse::reserved);
+}
+
+void add_notes(TextSheet& sheet, const Candidate& candidate) {
+  std::map<std::string, std::string> shown = candidate.notes;
+  std::erase_if(shown, [](const auto& note) { return is_silent(note.first); });
+  if (shown.empty()) return;
+  sheet.heading("Notes");
+  for (const auto& [field, text] : shown) sheet.item(field + ": " + text);
+}
+
 }  // namespace
 
 void add_candidate(TextSheet& sheet, const Candidate& candidate, const Spec& spec) {
@@ -176,9 +197,7 @@ void add_candidate(TextSheet& sheet, const Candidate& candidate, const Spec& spe
   add_operating_point(sheet, candidate);
   add_pole_model(sheet, candidate);
   add_roots(sheet, candidate);
-  if (candidate.notes.empty()) return;
-  sheet.heading("Notes");
-  for (const auto& [field, text] : candidate.notes) sheet.item(field + ": " + text);
+  add_notes(sheet, candidate);
 }
 
 }  // namespace bandwright

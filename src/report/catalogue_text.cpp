@@ -60,7 +60,7 @@ void list_transistors(TextSheet& sheet, const Catalogue& catalogue) {
                  {"fT", true},
                  {"use", false}},
                 {},
-                7};
+                {7}};
   for (const Transistor& t : catalogue.transistors)
     grid.add({t.type, t.pnp ? "PNP" : "NPN", gain_window(t),
               brief(t.collector_emitter_breakdown, Dimension::voltage, true),
@@ -91,7 +91,7 @@ std::string ratings_text(const std::vector<double>& ratings, Dimension dimension
 
 void list_families(TextSheet& sheet, const Catalogue& catalogue) {
   sheet.heading("Part families");
-  TextGrid grid{{{"key", false}, {"name", false}, {"values", false}, {"series", false}, {"tolerance", false}}, {}, 1};
+  TextGrid grid{{{"key", false}, {"name", false}, {"values", false}, {"series", false}, {"tolerance", false}}, {}, {1}};
   for (const Family& f : catalogue.families)
     grid.add({f.key, f.name, range_text(f.made, dimension_of(f)), join(f.series, ", "), tolerances_text(f)});
   sheet.grid(grid);
@@ -99,7 +99,7 @@ void list_families(TextSheet& sheet, const Catalogue& catalogue) {
 
 void list_series(TextSheet& sheet) {
   sheet.heading("Preferred-number series (IEC 60063)");
-  TextGrid grid{{{"series", false}, {"values a decade", true}, {"digits", true}}, {}, 0};
+  TextGrid grid{{{"series", false}, {"values a decade", true}, {"digits", true}}, {}, {0}};
   for (const Series& one : series()) grid.add({one.name, std::to_string(one.number), std::to_string(one.digits)});
   sheet.grid(grid);
 }
@@ -122,7 +122,7 @@ public:
   FigureGrid() {
     grid_.columns = {{"figure", false}, {"symbol", false}, {"min", true},         {"typ", true},
                      {"max", true},     {"at", false},     {"provenance", false}, {"sources", false}};
-    grid_.flexible = 7;
+    grid_.flexible = {7};
   }
   void add(const std::string& label, const char* symbol, const SheetFigure& figure, Dimension dimension) {
     if (std::isnan(figure.min) && std::isnan(figure.typ) && std::isnan(figure.max)) return;
@@ -220,7 +220,7 @@ std::string write_family(const Catalogue& catalogue, const Family& family) {
   const Dimension dimension = dimension_of(family);
   sheet.paragraph(family.key + ": " + family.name);
   sheet.heading("Figures");
-  TextGrid grid{{{"", false}, {"", false}}, {}, 1};
+  TextGrid grid{{{"", false}, {"", false}}, {}, {1}};
   grid.add({"made from", range_text(family.made, dimension)});
   grid.add({"first choice",
             family.first_choice.max > 0 ? range_text(family.first_choice, dimension) : "only when asked for"});

@@ -19,7 +19,6 @@ std::vector<std::string> row_of(const Candidate& candidate) {
     return format_quantity(candidate.analysis.figures[index(figure)], info(figure).dimension);
   };
   return {std::to_string(candidate.rank),
-          candidate.shortfalls.empty() ? "yes" : "no",
           candidate.device,
           candidate.variant,
           plain(Figure::gain),
@@ -27,8 +26,16 @@ std::vector<std::string> row_of(const Candidate& candidate) {
           plain(Figure::upper_cutoff),
           error_text(candidate.error),
           sensitivity_text(candidate.tolerance_sensitivity),
-          plain(Figure::collector_current),
-          candidate.best_at.empty() ? "" : join(candidate.best_at, ", ")};
+          format_quantity(candidate.analysis.figures[index(Figure::collector_current)], Dimension::current, 3)};
+}
+
+void add_titles(TextSheet& sheet, const DesignResult& result) {
+  TextGrid grid{{{"rank", true}, {"best at", false}}, {}, {1}};
+  for (const Candidate& candidate : result.candidates)
+    if (!candidate.best_at.empty()) grid.add({std::to_string(candidate.rank), join(candidate.best_at, ", ")});
+  if (grid.rows.empty()) return;
+  sheet.space();
+  sheet.grid(grid);
 }
 
 void add_shortfalls(TextSheet& sheet, const DesignResult& result) {
@@ -51,7 +58,6 @@ void add_ranking(TextSheet& sheet, const DesignResult& result) {
   const auto symbol = [](Figure figure) { return std::string(info(figure).symbol); };
   TextGrid grid;
   grid.columns = {{"rank", true},
-                  {"met", false},
                   {"device", false},
                   {"variant", false},
                   {"gain", true},
@@ -59,14 +65,15 @@ void add_ranking(TextSheet& sheet, const DesignResult& result) {
                   {symbol(Figure::upper_cutoff), true},
                   {"error", true},
                   {"tolerance sensitivity", true},
-                  {symbol(Figure::collector_current), true},
-                  {"best at", false}};
-  grid.flexible = grid.columns.size() - 1;
+                  {symbol(Figure::collector_current), true}};
+  grid.flexible = {2};
   for (const Candidate& candidate : result.candidates) grid.add(row_of(candidate));
   sheet.grid(grid);
   sheet.line(
-      "error: 0 on every target, 1 at a limit; tolerance sensitivity: 1 where the tolerances, as a root sum of "
-      "squares, fill a window.");
+      "error: 0 on every target, 1 at a limit, above 1 not met; tolerance sensitivity: 1 where the tolerances, as a "
+      "root "
+      "sum of squares, fill a window.");
+  add_titles(sheet, result);
   if (!any_shortfall(result)) return;
   sheet.heading("What falls short, by rank");
   add_shortfalls(sheet, result);

@@ -9,7 +9,8 @@ namespace {
 constexpr std::size_t kIndent = 2;
 constexpr std::size_t kGap = 2;
 constexpr std::size_t kNarrowestPage = 60;
-constexpr std::size_t kNarrowestCell = 12;
+constexpr std::size_t kHeadingCell = 12;   // longer headings are wrapped
+constexpr std::size_t kNarrowestCell = 9;  // flexible columns give way so far
 constexpr std::string_view kBold = "1";
 constexpr std::string_view kGreen = "1;32";
 constexpr std::string_view kYellow = "1;33";
@@ -30,14 +31,15 @@ std::vector<std::size_t> column_widths(const TextGrid& grid, std::size_t page) {
   std::size_t total = 0;
   for (std::size_t i = 0; i < widths.size(); ++i) {
     if (widths[i] == 0) continue;
-    for (const auto& piece : wrap(grid.columns[i].heading, kNarrowestCell))
+    for (const auto& piece : wrap(grid.columns[i].heading, kHeadingCell))
       widths[i] = std::max(widths[i], text_width(piece));
     total += widths[i] + kGap;
   }
-  if (total > page + kGap) {
-    std::size_t& flexible = widths[grid.flexible];
-    const std::size_t surplus = total - kGap - page;
-    flexible = std::max(std::min(flexible, kNarrowestCell), flexible > surplus ? flexible - surplus : 0);
+  std::size_t surplus = total > page + kGap ? total - kGap - page : 0;
+  for (const std::size_t i : grid.flexible) {
+    const std::size_t given = std::min(surplus, widths[i] - std::min(widths[i], kNarrowestCell));
+    widths[i] -= given;
+    surplus -= given;
   }
   return widths;
 }

@@ -18,7 +18,7 @@ std::vector<std::string> wrap(std::string_view text, std::size_t width);
 
 std::string join(const std::vector<std::string>& items, std::string_view separator);
 
-/// A grid of cells. The column `flexible` is wrapped where the rows would be wider than the page.
+/// A grid of cells. Where the rows would be wider than the page, the columns `flexible` are wrapped, first one first.
 struct TextGrid {
   struct Column {
     std::string heading;
@@ -26,7 +26,7 @@ struct TextGrid {
   };
   std::vector<Column> columns;
   std::vector<std::vector<std::string>> rows;
-  std::size_t flexible = 0;
+  std::vector<std::size_t> flexible;
 
   void add(std::vector<std::string> cells) { rows.push_back(std::move(cells)); }
   /// Columns without a single filled cell are left out; without headings no heading line is printed.

@@ -12,16 +12,10 @@ namespace bandwright {
 
 namespace {
 
-constexpr std::size_t kKeptBiases = 1 << 14;  // bounds the memory of a refinement
+constexpr std::size_t kKeptBiases = 1 << 15, kKeptPoints = 1 << 20;  // bound the memory of one space
 
 double shortage(double value, double needed) { return value < needed ? (needed - value) / needed : 0; }
 double excess(double value, double limit) { return limit > 0 && value > limit ? value / limit - 1 : 0; }
-
-std::uint64_t resistor_key(const GridPoint& p) {
-  std::uint64_t key = 0;
-  for (std::size_t i = 0; i < kResistorRoles; ++i) key = key << 12 | static_cast<std::uint64_t>(p[i] + 1);
-  return key;
-}
 
 }  // namespace
 
@@ -45,44 +39,68 @@ double search_error(const Spec& spec, const Analysis& a, const PartValues& worki
 Evaluator::Evaluator(const Spec& spec, const DesignSpace& space)
     : spec_(spec), space_(space), definition_(gain_definition(spec)), around_(surroundings(spec)) {}
 
-Stage Evaluator::stage_at(const PartValues& working) const { return {working, &space_.device->parameters, around_}; }
-
-const NominalBias& Evaluator::bias(const GridPoint& point, const Stage& stage, const Circuit<double>& circuit) {
-  const std::uint64_t key = resistor_key(point);
-  const auto known = solved_.find(key);
-  if (known != solved_.end()) return known->second;
-  if (solved_.size() >= kKeptBiases) solved_.clear();
-  return solved_.emplace(key, nominal_bias(stage, circuit)).first->second;
+Evaluator::Packed Evaluator::pack(const GridPoint& p) {
+  Packed packed{0, 0};
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    std::uint64_t& half = i < kResistorRoles ? packed.resistors : packed.capacitors;
+    half = half << 12 | static_cast<std::uint64_t>(p[i] + 1);
+  }
+  return packed;
 }
 
-Evaluator::Trial Evaluator::evaluate(const GridPoint& point) {
-  Trial t;
-  t.point = point;
-  const Stage stage = stage_at(working_values(space_, point));
+Stage Evaluator::stage_at(const GridPoint& point) const {
+  return {working_values(space_, point), &space_.device->parameters, around_};
+}
+
+Analysis Evaluator::analysis(const GridPoint& point) {
+  ++evaluations_;
+  const Stage stage = stage_at(point);
   const Circuit<double> circuit = circuit_of<double>(stage);
-  t.analysis = analyse_response(stage, circuit, bias(point, stage, circuit), definition_);
-  t.key.error = search_error(spec_, t.analysis, stage.parts, space_.device->parameters);
-  t.key.tolerance_sensitivity = kNotComputed;
+  if (biases_.size() >= kKeptBiases) biases_.clear();
+  const auto [place, is_new] = biases_.try_emplace(pack(point).resistors);
+  if (is_new) place->second = nominal_bias(stage, circuit);
+  return analyse_response(stage, circuit, place->second, definition_);
+}
+
+Evaluator::Known& Evaluator::known(const GridPoint& point) {
+  if (known_.size() >= kKeptPoints) known_.clear();
+  return known_[pack(point)];
+}
+
+double Evaluator::error(const GridPoint& point) {
+  Known& k = known(point);
+  if (std::isnan(k.error)) {
+    k.error = search_error(spec_, analysis(point), working_values(space_, point), space_.device->parameters);
+  }
+  return k.error;
+}
+
+double Evaluator::sensitivity(const GridPoint& point) {
+  Known& k = known(point);
+  if (!std::isnan(k.sensitivity)) return k.sensitivity;
+  const Analysis a = analysis(point);
+  if (a.point.state != BiasState::active) return k.sensitivity = kWorstError;
+  CauseWidths widths{};
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (space_.has(i)) widths[i] = half_width(space_.at(i, point).tolerance);
+  }
+  widths[kRoleCount] = gain_half_width(space_.device->parameters, a.point.collector_current);
+  const double s = tolerance_sensitivity(spec_, bandwright::sensitivity(stage_at(point), a, definition_), widths);
+  return k.sensitivity = std::isnan(s) ? kWorstError : s;
+}
+
+RankKey Evaluator::key(const GridPoint& point) {
+  RankKey k;
+  k.error = error(point);
+  k.tolerance_sensitivity = sensitivity(point);
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     if (!space_.has(i)) continue;
     const OfferedValue& v = space_.at(i, point);
-    t.key.values[i] = v.value;
-    t.key.series_sum += v.series ? v.series->number : 0;
+    k.values[i] = v.value;
+    k.series_sum += v.series ? v.series->number : 0;
   }
-  t.key.distinct_values = distinct_values(t.key.values);
-  return t;
-}
-
-void Evaluator::add_sensitivity(Trial& t) const {
-  if (!std::isnan(t.key.tolerance_sensitivity) || t.analysis.point.state != BiasState::active) return;
-  CauseWidths widths{};
-  for (std::size_t i = 0; i < kRoleCount; ++i) {
-    if (space_.has(i)) widths[i] = half_width(space_.at(i, t.point).tolerance);
-  }
-  const BipolarParameters& device = space_.device->parameters;
-  widths[kRoleCount] = gain_half_width(device, t.analysis.point.collector_current);
-  const Sensitivity s = sensitivity(stage_at(working_values(space_, t.point)), t.analysis, definition_);
-  t.key.tolerance_sensitivity = tolerance_sensitivity(spec_, s, widths);
+  k.distinct_values = distinct_values(k.values);
+  return k;
 }
 
 }  // namespace bandwright

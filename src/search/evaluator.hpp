@@ -1,4 +1,5 @@
-// Evaluates stages of one design space against a spec; keeps operating points while only capacitors change.
+// Evaluates grid points of one design space against a spec. Remembers what it has seen, and keeps operating points while
+// only capacitors change.
 #pragma once
 
 #include <cstdint>
@@ -25,28 +26,41 @@ class Evaluator {
 public:
   Evaluator(const Spec& spec, const DesignSpace& space);
 
-  /// A grid point with its error; the tolerance sensitivity is left out (NaN) until asked for.
-  struct Trial {
-    GridPoint point;
-    RankKey key;
-    Analysis analysis;
-  };
-  Trial evaluate(const GridPoint& point);
-  void add_sensitivity(Trial& trial) const;
+  double error(const GridPoint& point);
+  double sensitivity(const GridPoint& point);
+  RankKey key(const GridPoint& point);  ///< with the sensitivity
+  Analysis analysis(const GridPoint& point);
 
-  Stage stage_at(const PartValues& working) const;
   const DesignSpace& space() const { return space_; }
-  const Spec& spec() const { return spec_; }
-  const GainDefinition& definition() const { return definition_; }
+  std::size_t evaluations() const { return evaluations_; }  ///< analyses made, not remembered ones
 
 private:
-  const NominalBias& bias(const GridPoint& point, const Stage& stage, const Circuit<double>& circuit);
+  struct Packed {
+    std::uint64_t resistors, capacitors;
+    friend bool operator==(const Packed&, const Packed&) = default;
+  };
+  struct Hash {
+    std::size_t operator()(const Packed& p) const {
+      std::uint64_t z = p.resistors * 0x9e3779b97f4a7c15ull + p.capacitors;
+      z = (z ^ (z >> 29)) * 0xbf58476d1ce4e5b9ull;
+      return z ^ (z >> 32);
+    }
+  };
+  struct Known {
+    double error = kNotComputed;
+    double sensitivity = kNotComputed;
+  };
+  static Packed pack(const GridPoint& point);
+  Stage stage_at(const GridPoint& point) const;
+  Known& known(const GridPoint& point);
 
   const Spec& spec_;
   const DesignSpace& space_;
   GainDefinition definition_;
   Surroundings around_;
-  std::unordered_map<std::uint64_t, NominalBias> solved_;  // by the resistors' indices
+  std::size_t evaluations_ = 0;
+  std::unordered_map<std::uint64_t, NominalBias> biases_;  // by the resistors' indices
+  std::unordered_map<Packed, Known, Hash> known_;
 };
 
 }  // namespace bandwright

@@ -1,36 +1,25 @@
 #include "search/refinement.hpp"
 
-#include <set>
-#include <vector>
+#include <algorithm>
+
+#include "numeric/random.hpp"
 
 namespace bandwright {
 
 namespace {
 
-/// A change of one part, or of two.
-struct Move {
-  std::int8_t first = 0, first_step = 0;
-  std::int8_t second = -1, second_step = 0;
-};
+constexpr int kSteps[] = {-1, 1, -2, 2};
+constexpr int kLargestKick = 2;      // values a kicked part moves at most
+constexpr int kFewestKicked = 2;     // parts in one kick
+constexpr int kMostKicked = 4;
+constexpr int kPatience = 10;        // kicks without a gain before another optimum is taken up
+constexpr std::size_t kTakenUp = 12;  // of the best optima, to go on from
+constexpr std::size_t kEvaluationsPerKick = 40;  // at least: a small space is known whole before its budget is spent
 
-/// Moves of single parts first, then of pairs: the plateau that one coarse capacitor makes needs two at once.
-std::vector<Move> moves(const DesignSpace& space) {
-  std::vector<std::int8_t> roles_free;
+std::vector<std::int8_t> free_roles(const DesignSpace& space) {
+  std::vector<std::int8_t> list;
   for (std::size_t i = 0; i < kRoleCount; ++i) {
-    if (space.is_free(i)) roles_free.push_back(static_cast<std::int8_t>(i));
-  }
-  std::vector<Move> list;
-  for (std::int8_t a : roles_free) {
-    for (int s : kSteps) list.push_back({a, static_cast<std::int8_t>(s), -1, 0});
-  }
-  for (std::size_t i = 0; i < roles_free.size(); ++i) {
-    for (std::size_t k = i + 1; k < roles_free.size(); ++k) {
-      for (int s : kSteps) {
-        for (int t : kSteps) {
-          list.push_back({roles_free[i], static_cast<std::int8_t>(s), roles_free[k], static_cast<std::int8_t>(t)});
-        }
-      }
-    }
+    if (space.is_free(i)) list.push_back(static_cast<std::int8_t>(i));
   }
   return list;
 }
@@ -40,51 +29,118 @@ bool step(const DesignSpace& space, GridPoint& p, int role, int by) {
   return p[role] >= 0 && p[role] < static_cast<int>(space.offered[role]->size());
 }
 
-bool apply(const DesignSpace& space, const Move& m, GridPoint& p) {
-  return step(space, p, m.first, m.first_step) && (m.second < 0 || step(space, p, m.second, m.second_step));
-}
-
 /// The sensitivity is computed only where the error alone does not decide.
-bool improves(const Evaluator& evaluator, Evaluator::Trial& candidate, Evaluator::Trial& current, RankBy by) {
-  const int a = leading_class(candidate.key.error, by), b = leading_class(current.key.error, by);
-  if (a != b) return a < b;
-  evaluator.add_sensitivity(candidate);
-  evaluator.add_sensitivity(current);
-  return comes_before(candidate.key, current.key, by);
+bool improves(Evaluator& evaluator, const GridPoint& p, const Ranked& current, RankBy by) {
+  const int a = leading_class(evaluator.error(p), by), b = leading_class(current.key.error, by);
+  return a != b ? a < b : comes_before(evaluator.key(p), current.key, by);
 }
 
-bool find_better(Evaluator& evaluator, const std::vector<Move>& list, Evaluator::Trial& trial, RankBy by,
-                 std::size_t& next_move, const std::function<bool()>& stop) {
-  for (std::size_t tried = 0; tried < list.size(); ++tried) {
-    const Move& m = list[next_move];
-    next_move = (next_move + 1) % list.size();
-    GridPoint p = trial.point;
-    if (!apply(evaluator.space(), m, p)) continue;
-    Evaluator::Trial candidate = evaluator.evaluate(p);
-    if (improves(evaluator, candidate, trial, by)) {
-      trial = candidate;
-      return true;
-    }
-    if (tried % 64 == 63 && stop && stop()) return false;
+GridPoint kick(const DesignSpace& space, const std::vector<std::int8_t>& roles_free, GridPoint p, RandomStream& random) {
+  const int parts = std::min<int>(kFewestKicked + random.below(kMostKicked - kFewestKicked + 1),
+                                  static_cast<int>(roles_free.size()));
+  for (int i = 0; i < parts; ++i) {
+    const int role = roles_free[random.below(static_cast<int>(roles_free.size()))];
+    const int by = (1 + random.below(kLargestKick)) * (random.below(2) == 0 ? 1 : -1);
+    const int last = static_cast<int>(space.offered[role]->size()) - 1;
+    p[role] = static_cast<std::int16_t>(std::clamp(p[role] + by, 0, last));
   }
-  return false;
+  return p;
 }
+
+/// Distinct optima, best first.
+class Pool {
+public:
+  Pool(RankBy by, std::size_t kept) : by_(by), kept_(kept) {}
+
+  bool add(const Ranked& r) {
+    const auto place = std::lower_bound(list_.begin(), list_.end(), r, [this](const Ranked& a, const Ranked& b) {
+      return comes_before(a.key, b.key, by_);
+    });
+    if (place != list_.end() && place->point == r.point) return false;
+    const bool first = place == list_.begin();
+    list_.insert(place, r);
+    if (list_.size() > kept_) list_.pop_back();
+    return first;
+  }
+  const std::vector<Ranked>& list() const { return list_; }
+
+private:
+  RankBy by_;
+  std::size_t kept_;
+  std::vector<Ranked> list_;
+};
 
 }  // namespace
 
-bool find_better(Evaluator& evaluator, Evaluator::Trial& trial, RankBy by, std::size_t& next_move) {
-  const std::vector<Move> list = moves(evaluator.space());
-  return !list.empty() && find_better(evaluator, list, trial, by, next_move, nullptr);
+Neighbourhood::Neighbourhood(const DesignSpace& space) {
+  const std::vector<std::int8_t> roles_free = free_roles(space);
+  for (std::int8_t a : roles_free) {
+    for (int s : kSteps) moves_.push_back({a, static_cast<std::int8_t>(s), -1, 0});
+  }
+  // the plateau that one coarse capacitor makes needs two parts changed at once
+  for (std::size_t i = 0; i < roles_free.size(); ++i) {
+    for (std::size_t k = i + 1; k < roles_free.size(); ++k) {
+      for (int s : kSteps) {
+        for (int t : kSteps) {
+          moves_.push_back({roles_free[i], static_cast<std::int8_t>(s), roles_free[k], static_cast<std::int8_t>(t)});
+        }
+      }
+    }
+  }
 }
 
-Evaluator::Trial refine(Evaluator& evaluator, const GridPoint& start, RankBy by, const std::function<bool()>& stop) {
-  const std::vector<Move> list = moves(evaluator.space());
-  Evaluator::Trial best = evaluator.evaluate(start);
-  std::size_t next_move = 0;
-  while (!list.empty() && find_better(evaluator, list, best, by, next_move, stop)) {
+bool Neighbourhood::apply(const DesignSpace& space, const Move& m, GridPoint& p) const {
+  return step(space, p, m.first, m.first_step) && (m.second < 0 || step(space, p, m.second, m.second_step));
+}
+
+Ranked Neighbourhood::refine(Evaluator& evaluator, const GridPoint& start, RankBy by,
+                             const std::function<bool()>& stop) const {
+  Ranked best{start, evaluator.key(start)};
+  std::size_t next = 0;
+  for (std::size_t since_gain = 0; since_gain < moves_.size(); ++since_gain, next = (next + 1) % moves_.size()) {
+    GridPoint p = best.point;
+    if (!apply(evaluator.space(), moves_[next], p)) continue;
+    if (improves(evaluator, p, best, by)) {
+      best = {p, evaluator.key(p)};
+      since_gain = 0;
+    }
+    if (next % 64 == 63 && stop && stop()) break;
   }
-  evaluator.add_sensitivity(best);
   return best;
+}
+
+bool Neighbourhood::is_best(Evaluator& evaluator, const Ranked& point, RankBy by) const {
+  return std::none_of(moves_.begin(), moves_.end(), [&](const Move& m) {
+    GridPoint p = point.point;
+    return apply(evaluator.space(), m, p) && improves(evaluator, p, point, by);
+  });
+}
+
+std::vector<Ranked> iterated_local_search(Evaluator& evaluator, const std::vector<GridPoint>& starts, RankBy by,
+                                          std::uint64_t seed, std::size_t budget, std::size_t kept,
+                                          const std::function<bool()>& stop) {
+  const Neighbourhood neighbourhood(evaluator.space());
+  const std::vector<std::int8_t> roles_free = free_roles(evaluator.space());
+  Pool pool(by, kept);
+  for (const GridPoint& start : starts) pool.add(neighbourhood.refine(evaluator, start, by, stop));
+  if (roles_free.empty() || starts.empty()) return pool.list();
+
+  RandomStream random(seed);
+  Ranked current = pool.list().front();
+  int without_gain = 0;
+  for (std::size_t kicks = 0; evaluator.evaluations() < budget && kicks < budget / kEvaluationsPerKick; ++kicks) {
+    if (stop && stop()) break;
+    const Ranked next = neighbourhood.refine(evaluator, kick(evaluator.space(), roles_free, current.point, random), by, stop);
+    const bool gain = comes_before(next.key, current.key, by);
+    pool.add(next);
+    if (gain) current = next;
+    without_gain = gain ? 0 : without_gain + 1;
+    if (without_gain >= kPatience) {
+      current = pool.list()[random.below(static_cast<int>(std::min(kTakenUp, pool.list().size())))];
+      without_gain = 0;
+    }
+  }
+  return pool.list();
 }
 
 }  // namespace bandwright

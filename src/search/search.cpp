@@ -23,8 +23,12 @@ namespace {
 constexpr std::size_t kRelaxations = 384;       // over all spaces together
 constexpr std::size_t kLeastStarts = 3;         // in each space
 constexpr std::size_t kMostStarts = 64;
-constexpr std::size_t kRefinements = 48;        // of the best relaxed points
-constexpr std::size_t kPerSpace = 6;            // of them in one space, while others are left
+constexpr std::size_t kRefinements = 96;        // relaxed points refined, over all spaces
+constexpr std::size_t kStartsInSpace = 2;       // refined in one space at least
+constexpr std::size_t kRefinedSpaces = 30;
+constexpr std::size_t kKickedSpaces = 8;        // of the most promising, searched on by kicks
+constexpr std::size_t kKickBudget = 400000;     // analyses, over all of them
+constexpr std::size_t kKeptOptima = 24;         // of one space
 
 /// Runs tasks on TBB's threads, each writing its own slot, so that the answer does not depend on their number.
 class Workers {
@@ -78,7 +82,7 @@ std::vector<Seed> relax_all(const Spec& spec, const DesignSpaces& all, const Sea
       std::clamp(kRelaxations / std::max<std::size_t>(all.spaces.size(), 1), kLeastStarts, kMostStarts);
   const std::vector<Choices> choices = sobol_choices(starts, spec.seed);
   std::vector<Seed> seeds(all.spaces.size() * starts);
-  Workers workers(options, 0.0, 0.4, seeds.size(), stop);
+  Workers workers(options, 0.0, 0.2, seeds.size(), stop);
   workers.run([&](std::size_t i) {
     Seed& s = seeds[i];
     s.space = i / starts;
@@ -91,36 +95,47 @@ std::vector<Seed> relax_all(const Spec& spec, const DesignSpaces& all, const Sea
   return seeds;
 }
 
-/// The seeds worth refining: smallest error class first, in turn over the spaces so that none crowds out the others.
-std::vector<Seed> choose_seeds(std::vector<Seed> seeds, std::size_t spaces) {
+/// The work on one space: the seeds to refine in it and the analyses it may spend.
+struct Task {
+  std::size_t space = 0;
+  std::vector<GridPoint> starts;
+  std::size_t budget = 0;
+};
+
+/// The spaces worth refining, by the smallest error class of their relaxed points; the first share the kicks.
+std::vector<Task> plan(std::vector<Seed> seeds, const DesignSpaces& all) {
   std::stable_sort(seeds.begin(), seeds.end(), [](const Seed& a, const Seed& b) {
     return error_class(a.relaxed.error) < error_class(b.relaxed.error);
   });
-  std::vector<Seed> chosen, rest;
-  std::vector<std::size_t> taken(spaces, 0);
+  std::vector<Task> tasks;
   for (const Seed& s : seeds) {
-    const bool room = chosen.size() < kRefinements && taken[s.space] < kPerSpace;
-    if (room) ++taken[s.space];
-    (room ? chosen : rest).push_back(s);
+    auto task = std::find_if(tasks.begin(), tasks.end(), [&](const Task& t) { return t.space == s.space; });
+    if (task == tasks.end()) {
+      if (tasks.size() == kRefinedSpaces) continue;
+      task = tasks.insert(tasks.end(), Task{s.space, {}, 0});
+    }
+    const std::size_t most = std::max(kStartsInSpace, kRefinements / std::max<std::size_t>(all.spaces.size(), 1));
+    if (task->starts.size() < most) task->starts.push_back(snap(all.spaces[s.space], s.relaxed.values));
   }
-  for (const Seed& s : rest) {
-    if (chosen.size() < kRefinements) chosen.push_back(s);
-  }
-  return chosen;
+  const std::size_t kicked = std::min(tasks.size(), kKickedSpaces);
+  for (std::size_t i = 0; i < kicked; ++i) tasks[i].budget = kKickBudget / kicked;
+  return tasks;
 }
 
-Found found_from(const Evaluator::Trial& t, const DesignSpace& space) {
+Found found_from(Evaluator& evaluator, const Ranked& r) {
+  const DesignSpace& space = evaluator.space();
+  const Analysis a = evaluator.analysis(r.point);
   Found f;
   f.device = space.device_index;
   f.variant = space.variant;
-  f.parts = offered_parts(space, t.point);
-  f.allowed = t.key.error <= kWorstError;
-  f.standing.key = t.key;
+  f.parts = offered_parts(space, r.point);
+  f.allowed = r.key.error <= kWorstError;
+  f.standing.key = r.key;
   f.standing.device = space.device->parameters.type;
   f.standing.variant = space.variant->key;
-  f.standing.collector_current = t.analysis.point.collector_current;
-  f.standing.input_resistance = t.analysis.figures[index(Figure::input_resistance)];
-  for (std::size_t i = kResistorRoles; i < kRoleCount; ++i) f.standing.total_capacitance += t.key.values[i];
+  f.standing.collector_current = a.point.collector_current;
+  f.standing.input_resistance = a.figures[index(Figure::input_resistance)];
+  for (std::size_t i = kResistorRoles; i < kRoleCount; ++i) f.standing.total_capacitance += r.key.values[i];
   return f;
 }
 
@@ -147,21 +162,19 @@ SearchOutcome search(const Spec& spec, const Catalogue& catalogue, const std::ve
                      const SearchOptions& options) {
   const DesignSpaces all = design_spaces(spec, catalogue, devices);
   std::atomic<bool> stop{false};
-  const std::vector<Seed> seeds = choose_seeds(relax_all(spec, all, options, stop), all.spaces.size());
+  const std::vector<Task> tasks = plan(relax_all(spec, all, options, stop), all);
 
-  std::vector<Found> found(seeds.size());
-  Workers workers(options, 0.4, 1.0, seeds.size(), stop);
-  // once the caller has stopped the search, what is at hand is snapped and returned unrefined
-  const auto refine_seed = [&](std::size_t i) {
-    const DesignSpace& space = all.spaces[seeds[i].space];
-    Evaluator evaluator(spec, space);
-    const GridPoint start = snap(space, seeds[i].relaxed.values);
-    found[i] = found_from(refine(evaluator, start, options.rank_by, [&] { return workers.stopped(); }), space);
+  std::vector<std::vector<Found>> by_task(tasks.size());
+  Workers workers(options, 0.2, 1.0, tasks.size(), stop);
+  const auto work = [&](std::size_t i) {
+    Evaluator evaluator(spec, all.spaces[tasks[i].space]);
+    const auto optima = iterated_local_search(evaluator, tasks[i].starts, options.rank_by, spec.seed + tasks[i].space,
+                                              tasks[i].budget, kKeptOptima, [&] { return workers.stopped(); });
+    for (const Ranked& r : optima) by_task[i].push_back(found_from(evaluator, r));
   };
-  workers.run(refine_seed);
-  for (std::size_t i = 0; i < seeds.size() && stop; ++i) {
-    if (!found[i].variant) refine_seed(i);
-  }
+  workers.run(work);
+  std::vector<Found> found;
+  for (auto& list : by_task) found.insert(found.end(), list.begin(), list.end());
 
   SearchOutcome outcome;
   outcome.interrupted = stop;

@@ -7,6 +7,7 @@
 
 #include <bandwright/search.hpp>
 
+#include "numeric/random.hpp"
 #include "stage/first_estimates.hpp"
 
 namespace bandwright {
@@ -83,14 +84,8 @@ std::array<double, 3> shares_of_cutoff(bool bypassed, double a, double b) {
 std::vector<Choices> sobol_choices(std::size_t count, std::uint64_t seed) {
   boost::random::sobol sequence(kChoices);
   Choices shift;
-  std::uint64_t state = seed;
-  for (double& s : shift) {
-    // SplitMix64, Steele, Lea & Flood, OOPSLA 2014 (from memory)
-    std::uint64_t z = (state += 0x9e3779b97f4a7c15ull);
-    z = (z ^ (z >> 30)) * 0xbf58476d1ce4e5b9ull;
-    z = (z ^ (z >> 27)) * 0x94d049bb133111ebull;
-    s = static_cast<double>((z ^ (z >> 31)) >> 11) * 0x1p-53;
-  }
+  RandomStream random(seed);
+  for (double& s : shift) s = random.uniform();
   std::vector<Choices> points(count);
   for (Choices& p : points) {
     for (std::size_t i = 0; i < kChoices; ++i) {

@@ -10,7 +10,7 @@ using U = FigureUse;
 using D = Dimension;
 
 // Default tolerances: 1 dB, 20 % or 10 %; ours.
-constexpr double kOneDecibel = 0.12201845430196343;  // 10^(1/20) - 1
+constexpr double kOneDecibel = 0.12201845430196344;  // 10^(1/20) - 1
 constexpr double kWide = 0.20;
 constexpr double kUsual = 0.10;
 constexpr double kNone = 0;

@@ -30,8 +30,9 @@ std::optional<std::pair<double, double>> spread(const ConditionDraft& draft, dou
   return std::minmax({tidy(nominal * (1 - draft.tolerance->below)), tidy(nominal * (1 + draft.tolerance->above))});
 }
 
-void check_order(const Condition& c, const std::string& name, Dimension dimension, Statements& statements) {
-  if (c.min > c.max) return statements.object(name + ".min", "at most max, " + shown(c.max, dimension));
+void check_order(const Condition& c, bool both_stated, const std::string& name, Dimension dimension,
+                 Statements& statements) {
+  if (both_stated && c.min > c.max) return statements.object(name + ".min", "at most max, " + shown(c.max, dimension));
   if (c.min > c.nominal) statements.object(name + ".min", "at most the nominal value, " + shown(c.nominal, dimension));
   if (c.max < c.nominal) statements.object(name + ".max", "at least the nominal value, " + shown(c.nominal, dimension));
 }
@@ -44,7 +45,7 @@ Condition resolved(const ConditionDraft& draft, double nominal, const std::strin
       statements.object(name + ".tolerance", "no tolerance beside min and max, or a tolerance alone");
     std::tie(out.min, out.max) = *ends;
   } else {
-    check_order(out, name, dimension, statements);
+    check_order(out, draft.min && draft.max, name, dimension, statements);
   }
   return out;
 }

@@ -10,6 +10,7 @@
 
 #include "units/constants.hpp"
 #include "units/number_text.hpp"
+#include "units/quantity_text.hpp"
 
 namespace bandwright {
 
@@ -59,7 +60,11 @@ Json shown_load(double conductance) {
 
 Json shown_tolerance(const Tolerance& tolerance) {
   if (tolerance.below == tolerance.above) return tolerance.above;
-  return fmt::format("-{}/+{} %", percentage(tolerance.below), percentage(tolerance.above));
+  std::string unused;
+  const std::string percent = fmt::format("-{}/+{} %", percentage(tolerance.below), percentage(tolerance.above));
+  const auto again = read_tolerance(percent, Dimension::resistance, unused);
+  if (again && again->value == tolerance) return percent;
+  return fmt::format("-{}/+{}", tolerance.below, tolerance.above);
 }
 
 }  // namespace bandwright

@@ -39,9 +39,8 @@ void take_file(std::string_view text, std::string_view name, Statements& stateme
   const auto document = read_document(text, name, faults);
   if (!document) fail(faults);
   for (Fault& fault : faults) statements.object_at(fault.where, fault);
-  if (!document->is_object())
-    statements.object_at("", {std::string(name), found_text(*document), "a spec: an object { ... }", ""});
-  else if (is_result(*document))
+  if (!document->is_object()) fail({{std::string(name), found_text(*document), "a spec: an object { ... }", ""}});
+  if (is_result(*document))
     take_result(*document, statements);
   else
     statements.take_document(*document, "");

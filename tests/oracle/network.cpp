@@ -44,6 +44,8 @@ void Network::conductance(int a, int b, Real siemens) { elements_.push_back({a, 
 
 void Network::capacitor(int a, int b, Real farad) { elements_.push_back({a, b, a, b, 0, farad}); }
 
+void Network::coupling(int a, int b, Real farad) { couplings_.push_back({a, b, farad}); }
+
 void Network::controlled_current(int from, int to, int plus, int minus, Real g) {
   elements_.push_back({from, to, plus, minus, g, 0});
 }
@@ -53,6 +55,7 @@ void Network::close(int driven) {
   unknowns_ = 0;
   for (int w = 1; w < static_cast<int>(parent_.size()); ++w)
     if (root(w) == w && w != root(driven)) number_[static_cast<std::size_t>(w)] = unknowns_++;
+  unknowns_ += static_cast<int>(couplings_.size());
   assert(root(driven) != 0 && unknowns_ <= kMostUnknowns);
   number_[static_cast<std::size_t>(root(driven))] = unknowns_;
   const auto size = static_cast<std::size_t>(unknowns_ * (unknowns_ + 1));

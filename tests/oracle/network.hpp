@@ -1,4 +1,4 @@
-// A linear network by plain nodal analysis in complex long double: one unknown per wire, stamp by stamp, LU.
+// A linear network by nodal analysis in complex long double: one unknown per wire, stamp by stamp, LU.
 // Shares nothing with the library: it is the second method its results are held against. A double solve of the same
 // matrix is off by 2e-7 at worst on wide circuits, hence long double.
 #pragma once
@@ -20,6 +20,9 @@ public:
   void resistor(int a, int b, Real ohm);  ///< 0 joins
   void conductance(int a, int b, Real siemens);
   void capacitor(int a, int b, Real farad);
+  /// A capacitor whose current is an unknown of its own: one between two wires that neither holds, millifarads at
+  /// gigahertz, would else drown every resistor at its ends in the sums of the diagonal.
+  void coupling(int a, int b, Real farad);
   /// A current g (v(plus) - v(minus)) that flows from `from` through the element to `to`.
   void controlled_current(int from, int to, int plus, int minus, Real g);
 
@@ -48,11 +51,16 @@ private:
     int from, to, plus, minus;
     Real g, c;
   };
+  struct Coupling {
+    int a, b;
+    Real farad;
+  };
   int root(int wire) const;
 
   std::vector<int> parent_;
   std::vector<int> number_;
   std::vector<Element> elements_;
+  std::vector<Coupling> couplings_;
   std::vector<Real> g_, c_;  // unknowns x (unknowns + 1), last column: the driven wire
   int unknowns_ = 0;
 };
@@ -69,6 +77,17 @@ void Network::visit(Stamp stamp) const {
         if (columns[k] >= 0) stamp(rows[r], columns[k], sign * element.g, sign * element.c);
       }
     }
+  }
+  int current = unknowns_ - static_cast<int>(couplings_.size());
+  for (const Coupling& coupling : couplings_) {  // s C (v(a) - v(b)) - i = 0
+    const int ends[2] = {unknown(coupling.a), unknown(coupling.b)};
+    for (int k = 0; k < 2; ++k) {
+      const Real sign = k == 0 ? 1 : -1;
+      if (ends[k] >= 0 && ends[k] != unknowns_) stamp(ends[k], current, sign, Real(0));
+      if (ends[k] >= 0) stamp(current, ends[k], Real(0), sign * coupling.farad);
+    }
+    stamp(current, current, Real(-1), Real(0));
+    ++current;
   }
 }
 

@@ -4,6 +4,8 @@
 #include <cmath>
 #include <numbers>
 
+#include "fifty_digits.hpp"
+
 namespace oracle {
 
 using bandwright::index;
@@ -34,6 +36,13 @@ void place(Network& net, int a, int b, Real farad, Fate fate) {
     net.capacitor(a, b, farad);
 }
 
+void couple(Network& net, int a, int b, Real farad, Fate fate) {
+  if (fate == Fate::shorted)
+    net.join(a, b);
+  else if (fate == Fate::as_it_is)
+    net.coupling(a, b, farad);
+}
+
 void add_device(Network& net, const HybridPi& q, Fate small) {
   net.resistor(base, inner_base, q.r_bb);
   net.conductance(inner_base, emitter, q.g_pi);
@@ -58,7 +67,7 @@ Network build(const Circuit& x, const Treatment& how) {
     net.resistor(emf, input, x.around.source_resistance);
     place(net, input, ground, x.around.source_capacitance, how.small);
   }
-  place(net, input, base, p[index(Role::input_coupling)], how.cin);
+  couple(net, input, base, p[index(Role::input_coupling)], how.cin);
   net.resistor(base, ground, p[index(Role::upper_divider)]);
   net.resistor(base, ground, p[index(Role::lower_divider)]);
   net.resistor(collector, ground, p[index(Role::collector)]);
@@ -68,7 +77,7 @@ Network build(const Circuit& x, const Treatment& how) {
   place(net, collector, ground, x.around.stray.output, how.small);
   place(net, collector, base, x.around.stray.feedback, how.small);
   place(net, collector, ground, p[index(Role::shunt)], how.small);
-  place(net, collector, output, p[index(Role::output_coupling)], how.cout);
+  couple(net, collector, output, p[index(Role::output_coupling)], how.cout);
   place(net, output, ground, x.around.load_capacitance, how.small);
   if (how.load && x.around.load_conductance != 0) net.conductance(output, ground, x.around.load_conductance);
   net.close(emf);
@@ -137,7 +146,8 @@ Peak highest_peak(const Network& net, const std::vector<Real>& y) {
     const auto [log_f, value] = refine_peak(net, log_frequency(i - 1), log_frequency(i + 1));
     if (value > best.value * (1 + kTie)) best = {log_f, value};
   }
-  const Real limit = magnitude(net, kLimit);
+  if (y.back() < 0.9L * top) return best;
+  const Real limit = magnitude_in_fifty_digits(net, output, kLimit);
   if (limit > best.value * (1 + kTie)) best = {log_frequency(kScanPoints - 1), limit, true};
   return best;
 }
@@ -182,6 +192,25 @@ Edges edges(const Network& net, Real at) {
     result.lower = std::exp(*low), result.lower_slope = slope(net, *low);
   if (const auto high = crossing(net, y, log_reference, level, 1))
     result.upper = std::exp(*high), result.upper_slope = slope(net, *high);
+  return result;
+}
+
+Edges edges_near(const Network& net, const Edges& near, Real at) {
+  constexpr Real kAround = 0.01L;  // in ln f
+  Edges result = near;
+  if (at > 0)
+    result.gain = magnitude(net, at);
+  else if (near.rises_to_the_end)
+    result.gain = magnitude_in_fifty_digits(net, output, kLimit);
+  else
+    result.gain = refine_peak(net, std::log(near.reference) - kAround, std::log(near.reference) + kAround).second;
+  const Real level = result.gain / std::numbers::sqrt2_v<Real>;
+  const auto again = [&](const std::optional<Real>& edge, Real inwards) -> std::optional<Real> {
+    if (!edge) return std::nullopt;
+    return std::exp(bisect(net, level, std::log(*edge) + inwards, std::log(*edge) - inwards));
+  };
+  result.lower = again(near.lower, kAround);
+  result.upper = again(near.upper, -kAround);
   return result;
 }
 

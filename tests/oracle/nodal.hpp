@@ -50,4 +50,7 @@ struct Edges {
 /// Highest peak and half-power crossings nearest to it, or to `at` where that is not 0.
 Edges edges(const Network& network, Real at = 0);
 
+/// The same for a network a little apart from the one that gave `near`: no scan.
+Edges edges_near(const Network& network, const Edges& near, Real at = 0);
+
 }  // namespace oracle

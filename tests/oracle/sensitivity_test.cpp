@@ -40,12 +40,13 @@ const Figure kChain[] = {Figure::gain,
                          Figure::input_resistance};
 
 /// The figures of kChain at a factor on one cause, from bias to cutoffs in long double.
-std::array<Real, std::size(kChain)> chain(const RandomCircuit& c, Real temperature, Cause cause, Real factor) {
+std::array<Real, std::size(kChain)> chain(const RandomCircuit& c, const Edges& nominal, Real temperature, Cause cause,
+                                          Real factor) {
   BiasNetwork bias{widen(c.stage.parts), c.stage.around.supply, c.device.get(), 1};
   (cause == kGainMultiplier ? bias.gain_multiplier : bias.parts[cause]) *= factor;
   const Bias b = solve_bias(bias, temperature);
   Circuit x{bias.parts, hybrid_pi(*c.device, b), c.stage.around, c.definition.from_input};
-  const Edges e = edges(network(x), c.definition.frequency);
+  const Edges e = edges_near(network(x), nominal, c.definition.frequency);
   x.from_input = false;
   x.around.source_resistance = std::numeric_limits<double>::infinity();
   const Real r_in = midband_network(x).impedance(0, input, ground).real();
@@ -65,10 +66,10 @@ FigureValues held(const RandomCircuit& c, double temperature, Cause cause, doubl
   return analyse(stage, c.definition).figures;
 }
 
-void against_chain(const RandomCircuit& c, const Analysis& a, const Sensitivity& s, Cause cause,
+void against_chain(const RandomCircuit& c, const Edges& nominal, const Analysis& a, const Sensitivity& s, Cause cause,
                    const std::string& name, Agreement& agreement) {
-  const auto up = chain(c, a.point.junction_temperature, cause, std::exp(Real(kStep)));
-  const auto down = chain(c, a.point.junction_temperature, cause, std::exp(-Real(kStep)));
+  const auto up = chain(c, nominal, a.point.junction_temperature, cause, std::exp(Real(kStep)));
+  const auto down = chain(c, nominal, a.point.junction_temperature, cause, std::exp(-Real(kStep)));
   for (std::size_t i = 0; i < std::size(kChain); ++i) {
     const double found = s[index(kChain[i])][cause];
     const auto expected = static_cast<double>(std::log(up[i] / down[i]) / (2 * kStep));
@@ -100,6 +101,7 @@ void against_analysis(const RandomCircuit& c, const Analysis& a, const Sensitivi
 
 TEST_CASE("sensitivities against central differences", "[oracle][sensitivity]") {
   Agreement chained("S by the long double chain"), analysed("S by the analysis itself");
+  int rising = 0;
   CircuitSource source(6001, Breadth::ordinary);
   for (int done = 0, drawn = 0; done < kStages; ++drawn) {
     const RandomCircuit c = source.next();
@@ -107,14 +109,18 @@ TEST_CASE("sensitivities against central differences", "[oracle][sensitivity]") 
     if (a.point.state != BiasState::active) continue;
     ++done;
     const std::string name = fmt::format("stage {}", drawn);
+    const Edges nominal =
+        edges(network({widen(c.stage.parts), widen(a.small), c.stage.around, c.definition.from_input}),
+              c.definition.frequency);
+    rising += nominal.rises_to_the_end;
     const Sensitivity s = sensitivity(c.stage, a, c.definition);
     for (Cause cause = 0; cause < bandwright::kSensitivityCauses; ++cause) {
       if (!varies(c, cause)) continue;
-      against_chain(c, a, s, cause, name, chained);
+      against_chain(c, nominal, a, s, cause, name, chained);
       against_analysis(c, a, s, cause, name, analysed);
     }
   }
-  std::cout << "sensitivities, absolute\n";
+  std::cout << "sensitivities, absolute: " << kStages << " stages, " << rising << " rising to the end\n";
   for (const Agreement* a : {&chained, &analysed}) {
     std::cout << "  " << a->summary() << "\n";
     INFO(a->summary() << " in " << a->worst_where());

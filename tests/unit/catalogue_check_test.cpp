@@ -60,6 +60,7 @@ TEST_CASE("families: unknown, and of the other kind") {
   spec.parts.resistors.families = {"metal_film"};
   const auto faults = faults_of(spec);
   REQUIRE(faults.size() == 3);
+  CHECK(faults[0].where == "parts.resistors.family");
   CHECK(faults[0].suggestion == "metal-film");
   CHECK(faults[1].suggestion == "electrolytic");
   CHECK_THAT(faults[2].expected, ContainsSubstring("a family of capacitors"));

@@ -218,4 +218,9 @@ TEST_CASE("an electrolytic loses 0.5 % for each kelvin below 20 °C, from memory
   CHECK(resolve_value(built_in_catalogue(), spec, Role::bypass, 100e-6).working_value == 100e-6);
   spec.ambient.nominal = 333.15;
   CHECK(resolve_value(built_in_catalogue(), spec, Role::bypass, 100e-6).working_value == 100e-6);
+  spec.ambient.nominal = 218.15;  // -55 °C: 1.5 uF works as 0.94 uF, below the 1 uF film capacitor
+  const auto list = offered(spec, Role::bypass);
+  CHECK(std::is_sorted(list.begin(), list.end(),
+                       [](const OfferedValue& a, const OfferedValue& b) { return a.working_value < b.working_value; }));
+  CHECK(at(list, 1.5e-6)->working_value == Approx(0.9375e-6).epsilon(1e-12));
 }

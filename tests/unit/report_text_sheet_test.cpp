@@ -19,7 +19,7 @@ TEST_CASE("wrapping breaks at spaces and leaves long words whole") {
 }
 
 TEST_CASE("columns align on either side and empty ones are left out") {
-  TextGrid grid{{{"a", false}, {"empty", false}, {"n", true}}, {}, 0};
+  TextGrid grid{{{"a", false}, {"empty", false}, {"n", true}}, {}, {0}};
   grid.add({"first", "", "1"});
   grid.add({"b", "", "1000"});
   const auto lines = grid.lines(80);
@@ -28,7 +28,7 @@ TEST_CASE("columns align on either side and empty ones are left out") {
 }
 
 TEST_CASE("the flexible column gives way on a narrow page") {
-  TextGrid grid{{{"", false}, {"", false}}, {}, 1};
+  TextGrid grid{{{"", false}, {"", false}}, {}, {1}};
   grid.add({"key", "a text that is rather long for the page"});
   for (const auto& line : grid.lines(25).body) CHECK(text_width(line) <= 25);
   CHECK(grid.lines(25).body.size() > 1);
@@ -36,7 +36,7 @@ TEST_CASE("the flexible column gives way on a narrow page") {
 }
 
 TEST_CASE("a grid without rows prints nothing") {
-  const TextGrid grid{{{"a", false}}, {}, 0};
+  const TextGrid grid{{{"a", false}}, {}, {0}};
   CHECK(grid.lines(80).headings.empty());
   CHECK(grid.lines(80).body.empty());
 }

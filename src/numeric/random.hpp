@@ -1,0 +1,27 @@
+// A small random stream: the same numbers everywhere.
+//
+// Source: SplitMix64, Steele, Lea & Flood, Fast splittable pseudorandom number generators, OOPSLA 2014 (from memory).
+#pragma once
+
+#include <cstdint>
+
+namespace bandwright {
+
+class RandomStream {
+public:
+  explicit RandomStream(std::uint64_t seed) : state_(seed) {}
+
+  std::uint64_t next() {
+    std::uint64_t z = (state_ += 0x9e3779b97f4a7c15ull);
+    z = (z ^ (z >> 30)) * 0xbf58476d1ce4e5b9ull;
+    z = (z ^ (z >> 27)) * 0x94d049bb133111ebull;
+    return z ^ (z >> 31);
+  }
+  double uniform() { return static_cast<double>(next() >> 11) * 0x1p-53; }  ///< 0 <= x < 1
+  int below(int n) { return static_cast<int>(uniform() * n); }             ///< 0 .. n-1
+
+private:
+  std::uint64_t state_;
+};
+
+}  // namespace bandwright
