@@ -97,14 +97,14 @@ Ranked Neighbourhood::refine(Evaluator& evaluator, const GridPoint& start, RankB
                              const std::function<bool()>& stop) const {
   Ranked best{start, evaluator.key(start)};
   std::size_t next = 0;
-  for (std::size_t since_gain = 0; since_gain < moves_.size(); ++since_gain, next = (next + 1) % moves_.size()) {
+  for (std::size_t left = moves_.size(); left > 0; --left) {
+    const Move& move = moves_[next];
+    next = (next + 1) % moves_.size();
+    if (next % 64 == 0 && stop && stop()) break;
     GridPoint p = best.point;
-    if (!apply(evaluator.space(), moves_[next], p)) continue;
-    if (improves(evaluator, p, best, by)) {
-      best = {p, evaluator.key(p)};
-      since_gain = 0;
-    }
-    if (next % 64 == 63 && stop && stop()) break;
+    if (!apply(evaluator.space(), move, p) || !improves(evaluator, p, best, by)) continue;
+    best = {p, evaluator.key(p)};
+    left = moves_.size() + 1;  // every move is open again
   }
   return best;
 }

@@ -6,7 +6,7 @@
 #include <mutex>
 #include <numeric>
 
-#include <tbb/global_control.h>
+#include <tbb/info.h>
 #include <tbb/parallel_for.h>
 #include <tbb/task_arena.h>
 
@@ -38,8 +38,8 @@ public:
 
   template <class Task>
   void run(const Task& task) {
-    const int threads = options_.threads > 0 ? options_.threads : tbb::task_arena::automatic;
-    tbb::task_arena arena(threads);
+    const int most = tbb::info::default_concurrency();
+    tbb::task_arena arena(options_.threads > 0 ? std::min(options_.threads, most) : most);
     arena.execute([&] {
       tbb::parallel_for(std::size_t(0), tasks_, [&](std::size_t i) {
         if (stopped()) return;

@@ -1,0 +1,106 @@
+// The order of candidates, alternatives that differ, titles. Expected values are worked by hand.
+#include <bandwright/ranking.hpp>
+
+#include <algorithm>
+#include <limits>
+
+#include "catch.hpp"
+
+using namespace bandwright;
+
+namespace {
+
+RankKey key(double error, double sensitivity, int distinct = 9, int series = 100) {
+  RankKey k;
+  k.error = error;
+  k.tolerance_sensitivity = sensitivity;
+  k.distinct_values = distinct;
+  k.series_sum = series;
+  k.values = {1e5, 1e4, 1e3, 100, 500, 1e-6, 1e-6, 1e-5, 1e-10};
+  return k;
+}
+
+Standing standing(const RankKey& k, const char* device = "A", double current = 1e-3) {
+  Standing s;
+  s.key = k;
+  s.device = device;
+  s.variant = "split emitter";
+  s.collector_current = current;
+  s.input_resistance = 5e3;
+  s.total_capacitance = 12e-6;
+  return s;
+}
+
+}  // namespace
+
+TEST_CASE("error classes are multiples of 0.05, halves up", "[ranking]") {
+  CHECK(error_class(0) == 0);
+  CHECK(error_class(0.0249) == 0);
+  CHECK(error_class(0.025) == 1);
+  CHECK(error_class(0.0749) == 1);
+  CHECK(error_class(1.0) == 20);
+  CHECK(error_class(std::numeric_limits<double>::infinity()) > error_class(1e6));
+}
+
+TEST_CASE("sensitivity classes are steps of 5 %", "[ranking]") {
+  CHECK(sensitivity_class(1) == 0);
+  CHECK(sensitivity_class(1.05) == 1);
+  CHECK(sensitivity_class(1.02) == 0);
+  CHECK(sensitivity_class(1 / 1.05) == -1);
+  CHECK(sensitivity_class(std::numeric_limits<double>::quiet_NaN()) == std::numeric_limits<int>::max());
+}
+
+TEST_CASE("by error the class comes first, then sensitivity, distinct values, series, values", "[ranking]") {
+  const auto before = [](const RankKey& a, const RankKey& b) {
+    return comes_before(a, b, RankBy::error) && !comes_before(b, a, RankBy::error);
+  };
+  CHECK(before(key(0.01, 9), key(0.03, 1)));
+  CHECK(before(key(0.03, 1), key(0.05, 2)));  // one class
+  CHECK(before(key(0.0, 1, 5), key(0.0, 1.01, 6)));
+  CHECK(before(key(0.0, 1, 5, 40), key(0.0, 1, 5, 41)));
+  RankKey smaller = key(0, 1), absent = key(0, 1);
+  smaller.values[0] = 9e4;
+  absent.values[8] = 0;
+  CHECK(before(smaller, key(0, 1)));
+  CHECK(before(absent, key(0, 1)));
+  CHECK_FALSE(comes_before(key(0, 1), key(0, 1), RankBy::error));
+}
+
+TEST_CASE("by sensitivity candidates that meet the spec come first, least sensitive on top", "[ranking]") {
+  CHECK(comes_before(key(0.9, 0.5), key(0.0, 1), RankBy::sensitivity));
+  CHECK(comes_before(key(0.9, 2), key(1.1, 0.1), RankBy::sensitivity));
+  CHECK(comes_before(key(0.1, 1), key(0.9, 1), RankBy::sensitivity));
+}
+
+TEST_CASE("alternatives differ in device, variant, current or three parts", "[ranking]") {
+  const Standing a = standing(key(0, 1));
+  Standing two_parts = a, three_parts = a, current = a;
+  two_parts.key.values[0] *= 1.5;
+  two_parts.key.values[1] *= 1.5;
+  three_parts = two_parts;
+  three_parts.key.values[2] *= 1.3;
+  current.collector_current *= 1.6;
+  CHECK_FALSE(differ(a, two_parts));
+  CHECK(differ(a, three_parts));
+  CHECK(differ(a, current));
+  CHECK(differ(a, standing(key(0, 1), "B")));
+  const auto kept = alternatives({standing(key(0.2, 1)), a, two_parts, three_parts}, RankBy::error, 10);
+  REQUIRE(kept.size() == 2);
+  CHECK(kept[0] == 1);
+  CHECK(kept[1] == 3);
+  CHECK(alternatives({a, three_parts, current}, RankBy::error, 2).size() == 2);
+}
+
+TEST_CASE("equal values count once in a kind", "[ranking]") {
+  CHECK(distinct_values({1e3, 1e3, 2e3, 0, 1e3, 1e-6, 1e-6, 0, 0}) == 3);
+  CHECK(distinct_values({10, 10, 10, 10, 10, 10, 10, 10, 10}) == 2);
+}
+
+TEST_CASE("titles go to the best of the list", "[ranking]") {
+  const auto titles = best_at({standing(key(0.01, 2), "A", 2e-3), standing(key(0.02, 1), "B", 1e-3)});
+  REQUIRE(titles.size() == 2);
+  const auto holds = [&](std::size_t i, const char* t) { return std::find(titles[i].begin(), titles[i].end(), t) != titles[i].end(); };
+  CHECK(holds(0, "most exact"));
+  CHECK(holds(1, "least sensitive"));
+  CHECK(holds(1, "lowest current"));
+}
