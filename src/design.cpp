@@ -45,9 +45,10 @@ DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOp
 }
 
 DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values) {
-  const Transistor* transistor = catalogue.find_transistor(device);
-  if (!transistor) throw InputError(check_against_catalogue(with_device(spec, device), catalogue));
-  const std::vector<DerivedDevice> devices = {derive_parameters(*transistor)};
+  if (auto faults = check_against_catalogue(with_device(spec, device), catalogue); !faults.empty()) {
+    throw InputError(std::move(faults));
+  }
+  const std::vector<DerivedDevice> devices = {derive_parameters(*catalogue.find_transistor(device))};
   OfferedParts parts;
   for (const RoleInfo& r : roles()) {
     const double value = values[index(r.role)];

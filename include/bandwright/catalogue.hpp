@@ -9,6 +9,7 @@
 #include <bandwright/fault.hpp>
 #include <bandwright/quantity.hpp>
 #include <bandwright/spec.hpp>
+#include <array>
 #include <filesystem>
 #include <map>
 #include <optional>
@@ -149,6 +150,17 @@ std::vector<OfferedValue> offered_values(const Catalogue& catalogue, const Spec&
 /// One value resolved as offered_values would: family, tolerance, working value. A value in no family's range
 /// takes the nearest family of its kind.
 OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, double value);
+
+/// The offered value in each role; an absent role has value 0.
+using OfferedParts = std::array<OfferedValue, kRoleCount>;
+
+/// Rated voltage above the highest nominal voltage, next standard row; nullopt where the family has none.
+std::optional<double> rated_voltage(const Family& family, double highest_volts);
+
+/// Index of the smallest rating of a family that stands above the highest nominal voltage and is loaded to no more than
+/// half of its power (common practice, no source); power and voltage ratings of a resistor are pairs. nullopt where the
+/// family has none.
+std::optional<std::size_t> rating_row(const Family& family, double highest_volts, double highest_watts);
 
 /// What a spec asks for and a catalogue cannot give: unknown devices and families, a polarity that the supply does not
 /// take, a family that is refused, a pinned value that is not sold, rules under which no value is sold.

@@ -29,23 +29,12 @@ struct Part {
   std::string part_number;  ///< filled from the user's stock only
 };
 
-/// The offered value in each role; an absent role has value 0.
-using OfferedParts = std::array<OfferedValue, kRoleCount>;
-
 /// The two nodes of each role where every role is present.
 const std::array<std::string, 2>& nodes(Role role);
 
 /// The two nodes of a role beside the parts that are present: without the unbypassed emitter resistor the junction is
 /// the emitter, without the bypassed one it is ground.
 std::array<std::string, 2> nodes(Role role, const PartValues& values);
-
-/// Rated voltage above the highest nominal voltage, next standard row; nullopt where the family has none.
-std::optional<double> rated_voltage(const Family& family, double highest_volts);
-
-/// Index of the smallest rating of a family that stands above the highest nominal voltage and is loaded to no more than
-/// half of its power (common practice, no source); power and voltage ratings of a resistor are pairs. nullopt where the
-/// family has none.
-std::optional<std::size_t> rating_row(const Family& family, double highest_volts, double highest_watts);
 
 /// The parts list of a stage at the highest nominal supply. `reason` is filled where a rating does not exist.
 std::vector<Part> parts_list(const Spec& spec, const OfferedParts& parts, const Stage& stage, const Analysis& analysis,

@@ -6,7 +6,7 @@
 // improves the order. The answer depends on spec, catalogue and seed alone, not on the number of threads.
 //
 // A stage must, nominally, be active, with VCE >= 1 V and IC RC >= 0.5 V, within the transistor's current, power and
-// junction limits.
+// junction limits, and every part must have a rating that holds at the highest supply.
 #pragma once
 
 #include <functional>
@@ -15,7 +15,6 @@
 
 #include <bandwright/catalogue.hpp>
 #include <bandwright/device.hpp>
-#include <bandwright/purchase.hpp>
 #include <bandwright/ranking.hpp>
 #include <bandwright/spec.hpp>
 #include <bandwright/stage.hpp>

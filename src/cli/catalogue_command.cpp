@@ -41,7 +41,10 @@ int run_catalogue(const Arguments& arguments) {
   const Destination destination(arguments.value("output"));
   const Catalogue catalogue = catalogue_of(arguments);
   std::string text = arguments.operands.empty() ? write_catalogue(catalogue) : "";
-  for (const std::string& name : arguments.operands) text += (text.empty() ? "" : "\n") + entry(catalogue, name);
+  for (const std::string& name : arguments.operands) {
+    if (!text.empty()) text += '\n';
+    text += entry(catalogue, name);
+  }
   destination.write(text);
   tell_written(destination, arguments);
   return kMet;

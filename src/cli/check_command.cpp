@@ -79,7 +79,8 @@ void take_options(const Arguments& arguments, Subject& subject) {
     try {
       subject.values[index(role.role)] = part_value(role, *text);
     } catch (const UsageError& fault) {
-      faults += (faults.empty() ? "" : "\n") + std::string(fault.what());
+      if (!faults.empty()) faults += '\n';
+      faults += fault.what();
     }
   }
   if (const auto device = arguments.value("device")) {
@@ -126,8 +127,10 @@ std::string agreement_text(const Agreement& agreement, const std::string& name, 
   if (agreement.differing.empty())
     return head + fmt::format("all {} figures recomputed agree with the file, {}.", agreement.compared, most);
   std::string names;
-  for (const Figure figure : agreement.differing)
-    names += (names.empty() ? "" : ", ") + std::string(info(figure).label);
+  for (const Figure figure : agreement.differing) {
+    if (!names.empty()) names += ", ";
+    names += info(figure).label;
+  }
   return head + fmt::format("{} of {} figures recomputed differ from the file ({}), {} in {}.",
                             agreement.differing.size(), agreement.compared, names, most, info(agreement.worst).label);
 }

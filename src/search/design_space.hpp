@@ -7,7 +7,6 @@
 
 #include <bandwright/catalogue.hpp>
 #include <bandwright/device.hpp>
-#include <bandwright/purchase.hpp>
 #include <bandwright/stage.hpp>
 
 namespace bandwright {

@@ -36,6 +36,15 @@ double search_error(const Spec& spec, const Analysis& a, const PartValues& worki
   return v > 0 ? kWorstError * (1 + v) : error(spec, a.figures);
 }
 
+CauseWidths cause_widths(const DesignSpace& space, const GridPoint& point, double collector_current) {
+  CauseWidths widths{};
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (space.has(i)) widths[i] = half_width(space.at(i, point).tolerance);
+  }
+  widths[kRoleCount] = gain_half_width(space.device->parameters, collector_current);
+  return widths;
+}
+
 Evaluator::Evaluator(const Spec& spec, const DesignSpace& space)
     : spec_(spec), space_(space), definition_(gain_definition(spec)), around_(surroundings(spec)) {}
 
@@ -52,14 +61,39 @@ Stage Evaluator::stage_at(const GridPoint& point) const {
   return {working_values(space_, point), &space_.device->parameters, around_};
 }
 
+/// 0 where every part has a rating that holds.
+double Evaluator::overload(const GridPoint& point, const Stress& s) const {
+  double worst = 0;
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (!space_.has(i)) continue;
+    const Family& family = *space_.at(i, point).family;
+    if (rating_row(family, s.volts[i], s.watts[i])) continue;
+    const bool by_power = !family.power_ratings.empty();
+    worst = std::max(worst, by_power ? s.watts[i] / family.power_ratings.back()
+                                     : std::fabs(s.volts[i]) / family.voltage_ratings.back());
+  }
+  return worst;
+}
+
+const Evaluator::Prepared& Evaluator::prepared(const GridPoint& point, const Stage& stage,
+                                               const Circuit<double>& circuit) {
+  if (prepared_.size() >= kKeptBiases) prepared_.clear();
+  const auto [place, is_new] = prepared_.try_emplace(pack(point).resistors);
+  if (is_new) {
+    place->second.bias = nominal_bias(stage, circuit);
+    const OperatingPoint& nominal = place->second.bias.point;
+    if (nominal.state == BiasState::active) {
+      place->second.stress = stress(stage, nominal, spec_.highest_supply(), spec_.source.dc, spec_.load.dc);
+    }
+  }
+  return place->second;
+}
+
 Analysis Evaluator::analysis(const GridPoint& point) {
   ++evaluations_;
   const Stage stage = stage_at(point);
   const Circuit<double> circuit = circuit_of<double>(stage);
-  if (biases_.size() >= kKeptBiases) biases_.clear();
-  const auto [place, is_new] = biases_.try_emplace(pack(point).resistors);
-  if (is_new) place->second = nominal_bias(stage, circuit);
-  return analyse_response(stage, circuit, place->second, definition_);
+  return analyse_response(stage, circuit, prepared(point, stage, circuit).bias, definition_);
 }
 
 Evaluator::Known& Evaluator::known(const GridPoint& point) {
@@ -69,10 +103,14 @@ Evaluator::Known& Evaluator::known(const GridPoint& point) {
 
 double Evaluator::error(const GridPoint& point) {
   Known& k = known(point);
-  if (std::isnan(k.error)) {
-    k.error = search_error(spec_, analysis(point), working_values(space_, point), space_.device->parameters);
-  }
-  return k.error;
+  if (!std::isnan(k.error)) return k.error;
+  ++evaluations_;
+  const Stage stage = stage_at(point);
+  const Circuit<double> circuit = circuit_of<double>(stage);
+  const Prepared& p = prepared(point, stage, circuit);
+  if (const double over = overload(point, p.stress); over > 0) return k.error = kWorstError * (1 + over);
+  const Analysis a = analyse_response(stage, circuit, p.bias, definition_);
+  return k.error = search_error(spec_, a, stage.parts, space_.device->parameters);
 }
 
 double Evaluator::sensitivity(const GridPoint& point) {
@@ -80,11 +118,7 @@ double Evaluator::sensitivity(const GridPoint& point) {
   if (!std::isnan(k.sensitivity)) return k.sensitivity;
   const Analysis a = analysis(point);
   if (a.point.state != BiasState::active) return k.sensitivity = kWorstError;
-  CauseWidths widths{};
-  for (std::size_t i = 0; i < kRoleCount; ++i) {
-    if (space_.has(i)) widths[i] = half_width(space_.at(i, point).tolerance);
-  }
-  widths[kRoleCount] = gain_half_width(space_.device->parameters, a.point.collector_current);
+  const CauseWidths widths = cause_widths(space_, point, a.point.collector_current);
   const double s = tolerance_sensitivity(spec_, bandwright::sensitivity(stage_at(point), a, definition_), widths);
   return k.sensitivity = std::isnan(s) ? kWorstError : s;
 }

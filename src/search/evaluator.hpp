@@ -22,6 +22,9 @@ double violation(const Analysis& analysis, const PartValues& working, const Bipo
 double search_error(const Spec& spec, const Analysis& analysis, const PartValues& working,
                     const BipolarParameters& device);
 
+/// The tolerances' half-widths at a grid point, and hFE's at a collector current.
+CauseWidths cause_widths(const DesignSpace& space, const GridPoint& point, double collector_current);
+
 class Evaluator {
 public:
   Evaluator(const Spec& spec, const DesignSpace& space);
@@ -50,7 +53,14 @@ private:
     double error = kNotComputed;
     double sensitivity = kNotComputed;
   };
+  /// What a set of resistors decides: the operating point, and volts and watts at the highest supply.
+  struct Prepared {
+    NominalBias bias;
+    Stress stress;
+  };
   static Packed pack(const GridPoint& point);
+  const Prepared& prepared(const GridPoint& point, const Stage& stage, const Circuit<double>& circuit);
+  double overload(const GridPoint& point, const Stress& stress) const;
   Stage stage_at(const GridPoint& point) const;
   Known& known(const GridPoint& point);
 
@@ -59,7 +69,7 @@ private:
   GainDefinition definition_;
   Surroundings around_;
   std::size_t evaluations_ = 0;
-  std::unordered_map<std::uint64_t, NominalBias> biases_;  // by the resistors' indices
+  std::unordered_map<std::uint64_t, Prepared> prepared_;  // by the resistors' indices
   std::unordered_map<Packed, Known, Hash> known_;
 };
 

@@ -35,7 +35,7 @@ bool improves(Evaluator& evaluator, const GridPoint& p, const Ranked& current, R
   return a != b ? a < b : comes_before(evaluator.key(p), current.key, by);
 }
 
-GridPoint kick(const DesignSpace& space, const std::vector<std::int8_t>& roles_free, GridPoint p, RandomStream& random) {
+GridPoint kicked(const DesignSpace& space, const std::vector<std::int8_t>& roles_free, GridPoint p, RandomStream& random) {
   const int parts = std::min<int>(kFewestKicked + random.below(kMostKicked - kFewestKicked + 1),
                                   static_cast<int>(roles_free.size()));
   for (int i = 0; i < parts; ++i) {
@@ -46,29 +46,6 @@ GridPoint kick(const DesignSpace& space, const std::vector<std::int8_t>& roles_f
   }
   return p;
 }
-
-/// Distinct optima, best first.
-class Pool {
-public:
-  Pool(RankBy by, std::size_t kept) : by_(by), kept_(kept) {}
-
-  bool add(const Ranked& r) {
-    const auto place = std::lower_bound(list_.begin(), list_.end(), r, [this](const Ranked& a, const Ranked& b) {
-      return comes_before(a.key, b.key, by_);
-    });
-    if (place != list_.end() && place->point == r.point) return false;
-    const bool first = place == list_.begin();
-    list_.insert(place, r);
-    if (list_.size() > kept_) list_.pop_back();
-    return first;
-  }
-  const std::vector<Ranked>& list() const { return list_; }
-
-private:
-  RankBy by_;
-  std::size_t kept_;
-  std::vector<Ranked> list_;
-};
 
 }  // namespace
 
@@ -116,31 +93,43 @@ bool Neighbourhood::is_best(Evaluator& evaluator, const Ranked& point, RankBy by
   });
 }
 
-std::vector<Ranked> iterated_local_search(Evaluator& evaluator, const std::vector<GridPoint>& starts, RankBy by,
-                                          std::uint64_t seed, std::size_t budget, std::size_t kept,
-                                          const std::function<bool()>& stop) {
-  const Neighbourhood neighbourhood(evaluator.space());
-  const std::vector<std::int8_t> roles_free = free_roles(evaluator.space());
-  Pool pool(by, kept);
-  for (const GridPoint& start : starts) pool.add(neighbourhood.refine(evaluator, start, by, stop));
-  if (roles_free.empty() || starts.empty()) return pool.list();
+void Pool::add(const Ranked& r) {
+  const auto place = std::lower_bound(list_.begin(), list_.end(), r, [this](const Ranked& a, const Ranked& b) {
+    return comes_before(a.key, b.key, by_);
+  });
+  if (place != list_.end() && place->point == r.point) return;
+  list_.insert(place, r);
+  if (list_.size() > kept_) list_.pop_back();
+}
 
+LocalSearch::LocalSearch(const Spec& spec, const DesignSpace& space, RankBy by, std::size_t kept)
+    : by_(by), evaluator_(spec, space), neighbourhood_(space), pool_(by, kept) {}
+
+void LocalSearch::refine(const std::vector<GridPoint>& starts, const std::function<bool()>& stop) {
+  for (const GridPoint& start : starts) pool_.add(neighbourhood_.refine(evaluator_, start, by_, stop));
+}
+
+void LocalSearch::kick(std::uint64_t seed, std::size_t budget, const std::function<bool()>& stop) {
+  const DesignSpace& space = evaluator_.space();
+  const std::vector<std::int8_t> roles_free = free_roles(space);
+  if (roles_free.empty() || optima().empty()) return;
   RandomStream random(seed);
-  Ranked current = pool.list().front();
+  Ranked current = optima().front();
   int without_gain = 0;
-  for (std::size_t kicks = 0; evaluator.evaluations() < budget && kicks < budget / kEvaluationsPerKick; ++kicks) {
+  const std::size_t last = evaluator_.evaluations() + budget;
+  for (std::size_t kicks = 0; evaluator_.evaluations() < last && kicks < budget / kEvaluationsPerKick; ++kicks) {
     if (stop && stop()) break;
-    const Ranked next = neighbourhood.refine(evaluator, kick(evaluator.space(), roles_free, current.point, random), by, stop);
-    const bool gain = comes_before(next.key, current.key, by);
-    pool.add(next);
+    const GridPoint start = kicked(space, roles_free, current.point, random);
+    const Ranked next = neighbourhood_.refine(evaluator_, start, by_, stop);
+    const bool gain = comes_before(next.key, current.key, by_);
+    pool_.add(next);
     if (gain) current = next;
     without_gain = gain ? 0 : without_gain + 1;
     if (without_gain >= kPatience) {
-      current = pool.list()[random.below(static_cast<int>(std::min(kTakenUp, pool.list().size())))];
+      current = optima()[random.below(static_cast<int>(std::min(kTakenUp, optima().size())))];
       without_gain = 0;
     }
   }
-  return pool.list();
 }
 
 }  // namespace bandwright

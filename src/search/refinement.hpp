@@ -39,10 +39,37 @@ private:
   std::vector<Move> moves_;
 };
 
-/// Refines the starts, then kicks and refines until `budget` analyses are spent. Returns distinct local optima, best first,
-/// at most `kept`.
-std::vector<Ranked> iterated_local_search(Evaluator& evaluator, const std::vector<GridPoint>& starts, RankBy by,
-                                          std::uint64_t seed, std::size_t budget, std::size_t kept,
-                                          const std::function<bool()>& stop);
+/// Distinct local optima, best first.
+class Pool {
+public:
+  Pool(RankBy by, std::size_t kept) : by_(by), kept_(kept) {}
+  void add(const Ranked& r);
+  const std::vector<Ranked>& list() const { return list_; }
+
+private:
+  RankBy by_;
+  std::size_t kept_;
+  std::vector<Ranked> list_;
+};
+
+/// The search of one design space.
+class LocalSearch {
+public:
+  LocalSearch(const Spec& spec, const DesignSpace& space, RankBy by, std::size_t kept);
+
+  void refine(const std::vector<GridPoint>& starts, const std::function<bool()>& stop);
+
+  /// Kicks and refines until `budget` analyses are spent since the last call.
+  void kick(std::uint64_t seed, std::size_t budget, const std::function<bool()>& stop);
+
+  const std::vector<Ranked>& optima() const { return pool_.list(); }
+  Evaluator& evaluator() { return evaluator_; }
+
+private:
+  RankBy by_;
+  Evaluator evaluator_;
+  Neighbourhood neighbourhood_;
+  Pool pool_;
+};
 
 }  // namespace bandwright

@@ -161,6 +161,11 @@ Relaxed relax(const Spec& spec, const DesignSpace& space, const PartValues& star
   const Stage stage{r.values, &space.device->parameters, surroundings(spec)};
   const Analysis a = analyse(stage, gain_definition(spec));
   r.error = search_error(spec, a, r.values, *stage.device);
+  if (r.error < kWorstError) {
+    const Sensitivity slopes = sensitivity(stage, a, gain_definition(spec));
+    r.tolerance_sensitivity = tolerance_sensitivity(
+        spec, slopes, cause_widths(space, snap(space, r.values), a.point.collector_current));
+  }
   return r;
 }
 

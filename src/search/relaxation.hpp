@@ -1,6 +1,7 @@
 // Continuous relaxation of a design over the logarithms of its values, by NLopt's SLSQP with exact gradients.
 #pragma once
 
+#include <bandwright/margins.hpp>
 #include <bandwright/spec.hpp>
 
 #include "search/design_space.hpp"
@@ -11,6 +12,7 @@ namespace bandwright {
 struct Relaxed {
   PartValues values{};
   double error = 0;  ///< of the exact response; past kWorstError where a condition of the search is broken
+  double tolerance_sensitivity = kWorstError;  ///< with the tolerances of the nearest offered values
 };
 
 /// First on the pole model, then on the exact response. The operating point's conditions are constraints.

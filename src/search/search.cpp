@@ -2,9 +2,8 @@
 
 #include <algorithm>
 #include <atomic>
-#include <cmath>
+#include <memory>
 #include <mutex>
-#include <numeric>
 
 #include <tbb/info.h>
 #include <tbb/parallel_for.h>
@@ -95,31 +94,60 @@ std::vector<Seed> relax_all(const Spec& spec, const DesignSpaces& all, const Sea
   return seeds;
 }
 
-/// The work on one space: the seeds to refine in it and the analyses it may spend.
+/// The spaces worth refining and the starts in each, by error class and sensitivity of their relaxed points.
 struct Task {
   std::size_t space = 0;
   std::vector<GridPoint> starts;
-  std::size_t budget = 0;
 };
 
-/// The spaces worth refining, by the smallest error class of their relaxed points; the first share the kicks.
-std::vector<Task> plan(std::vector<Seed> seeds, const DesignSpaces& all) {
-  std::stable_sort(seeds.begin(), seeds.end(), [](const Seed& a, const Seed& b) {
-    return error_class(a.relaxed.error) < error_class(b.relaxed.error);
+std::vector<Task> plan(std::vector<Seed> seeds, const DesignSpaces& all, RankBy by) {
+  std::stable_sort(seeds.begin(), seeds.end(), [by](const Seed& a, const Seed& b) {
+    const int ea = leading_class(a.relaxed.error, by), eb = leading_class(b.relaxed.error, by);
+    return ea != eb ? ea < eb : a.relaxed.tolerance_sensitivity < b.relaxed.tolerance_sensitivity;
   });
+  const std::size_t most = std::max(kStartsInSpace, kRefinements / std::max<std::size_t>(all.spaces.size(), 1));
   std::vector<Task> tasks;
   for (const Seed& s : seeds) {
     auto task = std::find_if(tasks.begin(), tasks.end(), [&](const Task& t) { return t.space == s.space; });
     if (task == tasks.end()) {
       if (tasks.size() == kRefinedSpaces) continue;
-      task = tasks.insert(tasks.end(), Task{s.space, {}, 0});
+      task = tasks.insert(tasks.end(), Task{s.space, {}});
     }
-    const std::size_t most = std::max(kStartsInSpace, kRefinements / std::max<std::size_t>(all.spaces.size(), 1));
     if (task->starts.size() < most) task->starts.push_back(snap(all.spaces[s.space], s.relaxed.values));
   }
-  const std::size_t kicked = std::min(tasks.size(), kKickedSpaces);
-  for (std::size_t i = 0; i < kicked; ++i) tasks[i].budget = kKickBudget / kicked;
   return tasks;
+}
+
+using LocalSearches = std::vector<std::unique_ptr<LocalSearch>>;
+
+/// Best first, by the best optimum of each.
+void sort_by_best(LocalSearches& searches, RankBy by) {
+  std::stable_sort(searches.begin(), searches.end(), [by](const auto& a, const auto& b) {
+    return comes_before(a->optima().front().key, b->optima().front().key, by);
+  });
+}
+
+/// Refines the starts of every task, then spends the kicks on the spaces that came out best.
+LocalSearches search_spaces(const Spec& spec, const DesignSpaces& all, const std::vector<Task>& tasks,
+                            const SearchOptions& options, std::atomic<bool>& stop) {
+  LocalSearches searches;
+  for (const Task& t : tasks) {
+    searches.push_back(std::make_unique<LocalSearch>(spec, all.spaces[t.space], options.rank_by, kKeptOptima));
+  }
+  Workers refiners(options, 0.2, 0.4, tasks.size(), stop);
+  const auto refine = [&](std::size_t i) { searches[i]->refine(tasks[i].starts, [&] { return refiners.stopped(); }); };
+  refiners.run(refine);
+  // once the caller has stopped the search, what is at hand is snapped and returned as it is
+  for (std::size_t i = 0; i < tasks.size(); ++i) {
+    if (searches[i]->optima().empty()) refine(i);
+  }
+  sort_by_best(searches, options.rank_by);
+  const std::size_t chosen = std::min(searches.size(), kKickedSpaces);
+  Workers kickers(options, 0.4, 1.0, chosen, stop);
+  kickers.run([&](std::size_t i) {
+    searches[i]->kick(spec.seed + i, kKickBudget / chosen, [&] { return kickers.stopped(); });
+  });
+  return searches;
 }
 
 Found found_from(Evaluator& evaluator, const Ranked& r) {
@@ -162,19 +190,12 @@ SearchOutcome search(const Spec& spec, const Catalogue& catalogue, const std::ve
                      const SearchOptions& options) {
   const DesignSpaces all = design_spaces(spec, catalogue, devices);
   std::atomic<bool> stop{false};
-  const std::vector<Task> tasks = plan(relax_all(spec, all, options, stop), all);
-
-  std::vector<std::vector<Found>> by_task(tasks.size());
-  Workers workers(options, 0.2, 1.0, tasks.size(), stop);
-  const auto work = [&](std::size_t i) {
-    Evaluator evaluator(spec, all.spaces[tasks[i].space]);
-    const auto optima = iterated_local_search(evaluator, tasks[i].starts, options.rank_by, spec.seed + tasks[i].space,
-                                              tasks[i].budget, kKeptOptima, [&] { return workers.stopped(); });
-    for (const Ranked& r : optima) by_task[i].push_back(found_from(evaluator, r));
-  };
-  workers.run(work);
+  const std::vector<Task> tasks = plan(relax_all(spec, all, options, stop), all, options.rank_by);
+  const LocalSearches searches = search_spaces(spec, all, tasks, options, stop);
   std::vector<Found> found;
-  for (auto& list : by_task) found.insert(found.end(), list.begin(), list.end());
+  for (const auto& s : searches) {
+    for (const Ranked& r : s->optima()) found.push_back(found_from(s->evaluator(), r));
+  }
 
   SearchOutcome outcome;
   outcome.interrupted = stop;

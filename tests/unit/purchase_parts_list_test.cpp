@@ -159,14 +159,14 @@ TEST_CASE("ratings hold at the highest supply, not only at the nominal one") {
 
 TEST_CASE("a voltage that no rating of the family reaches is said, and left without a number") {
   Spec spec = supplied(250);
-  const Bought b = buy(spec, {470e3, 10e3, 47e3, 0, 1000, 10e-6, 10e-6, 100e-6, 0});
+  const Bought b = buy(spec, {470e3, 5600, 47e3, 0, 1000, 10e-6, 10e-6, 100e-6, 0});
   CHECK(std::isnan(b[Role::output_coupling].voltage_rating));
   CHECK_THAT(b.reason, Catch::Matchers::ContainsSubstring("C2"));
   CHECK(buy(supplied(12), kSplit).reason.empty());
 }
 
 TEST_CASE("without an operating point every part is rated for the whole supply") {
-  const Bought b = buy(supplied(12), {10e3, 47e3, 47e3, 0, 100, 10e-6, 10e-6, 100e-6, 0});
+  const Bought b = buy(supplied(12), {10e3, 47e3, 47e3, 0, 1000, 10e-6, 10e-6, 100e-6, 0});
   REQUIRE(b.analysis.point.state != BiasState::active);
   for (const Part& part : b.parts) {
     CHECK(std::fabs(part.volts) == Approx(12));

@@ -23,7 +23,7 @@ TEST_CASE("a transistor shows figures, provenance, lead order and sources") {
       CHECK_THAT(text, ContainsSubstring(piece));
     CHECK_THAT(text, ContainsSubstring(t.pnp ? "PNP" : "NPN"));
     for (const Package& p : t.packages) CHECK_THAT(text, ContainsSubstring(p.lead_order));
-    CHECK_THAT(text, !ContainsSubstring("nan") && !ContainsSubstring("not described"));
+    CHECK_THAT(text, !ContainsSubstring("nan ") && !ContainsSubstring("not described"));
   }
 }
 

@@ -1,6 +1,6 @@
 // Ratings: the smallest rating of a family that stands above the stress.
 #include <algorithm>
-#include <bandwright/purchase.hpp>
+#include <bandwright/catalogue.hpp>
 #include <cmath>
 
 namespace bandwright {
