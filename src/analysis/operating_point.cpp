@@ -11,14 +11,16 @@ constexpr double kResidual = 1e-12;      // of Vth
 constexpr double kActiveMargin = 0.3;    // V over VCE(sat)
 constexpr double kLeakageRatio = 100.0;  // IC over ICBO
 
+/// ln IC of the textbook solution, VBE taken once from the exponential law.
 double first_guess(const Circuit<double>& c, const Bipolar<double>& device, double high) {
   const double r1 = c[Role::upper_divider], r2 = c[Role::lower_divider];
   const double v_th = c.supply * r2 / (r1 + r2), r_th = r1 * r2 / (r1 + r2);
   const GainCurve& curve = device.sheet->gain;
   const double gain = e_to(curve.log_gain[curve.points / 2] + device.log_gain_shift);
   const double r_e = c[Role::emitter] + c[Role::emitter_bypassed] + r_th / gain;
-  const double v_e = std::max(v_th - 0.6, 0.02);
-  return std::min(ln(v_e / r_e), high);
+  const auto log_current = [&](double v_be) { return std::min(ln(std::max(v_th - v_be, 0.02) / r_e), high); };
+  const double rough = log_current(0.6);
+  return log_current(device.thermal_voltage * (rough - device.log_saturation_current));
 }
 
 }  // namespace
@@ -27,25 +29,25 @@ BiasSolution solve_bias(const Circuit<double>& c, const Bipolar<double>& device,
   const double r_total = c[Role::collector] + c[Role::emitter] + c[Role::emitter_bypassed];
   double high = ln(c.supply / r_total);
   double low = std::min(device.log_saturation_current - 1, high - 1);
+  const double tolerance =
+      kResidual * c.supply * c[Role::lower_divider] / (c[Role::upper_divider] + c[Role::lower_divider]);
   BiasSolution s;
-  const BiasTrial<double> top = bias_trial(c, device, high);
-  if (top.residual > 0) {
-    s.trial = top;
-    s.log_current = high;
-    return s;
-  }
-  const double tolerance = kResidual * c.supply * c[Role::lower_divider] /
-                           (c[Role::upper_divider] + c[Role::lower_divider]);
+  bool bracketed = false;  // high is known to lie above the root
   double x = std::isnan(guess) ? first_guess(c, device, high) : std::clamp(guess, low, high);
   for (int i = 0; i < 200; ++i) {
     s.trial = bias_trial(c, device, x);
     s.log_current = x;
-    (s.trial.residual > 0 ? low : high) = x;
     const double step = -s.trial.residual / s.trial.slope;
-    double next = x + step;
-    // a polished root: the residual is met and the last Newton step no longer moves IC
+    // the residual is met and the last Newton step no longer moves IC
     if (std::fabs(s.trial.residual) <= tolerance && std::fabs(step) <= 1e-13) break;
-    if (!(next > low && next < high)) next = 0.5 * (low + high);
+    if (s.trial.residual > 0 && x >= high) return s;  // VCE would fall below 0 first
+    bracketed = bracketed || s.trial.residual <= 0;
+    (s.trial.residual > 0 ? low : high) = x;
+    double next = x + step;
+    if (next >= high && !bracketed)
+      next = high;
+    else if (!(next > low && next < high))
+      next = 0.5 * (low + high);
     if (next == x) break;
     x = next;
   }

@@ -26,16 +26,15 @@ template <class T>
 Bipolar<T> at_temperature(const BipolarParameters& sheet, const T& junction, const T& multiplier) {
   const T ratio = junction / T(kReferenceTemperature);
   const T log_ratio = ln(ratio);
-  const T gap = T(sheet.bandgap * kElementaryCharge / kBoltzmann) *
-                (T(1.0 / kReferenceTemperature) - T(1.0) / junction);
+  const T gap =
+      T(sheet.bandgap * kElementaryCharge / kBoltzmann) * (T(1.0 / kReferenceTemperature) - T(1.0) / junction);
   Bipolar<T> device;
   device.sheet = &sheet;
   device.thermal_voltage = junction * T(kBoltzmann / kElementaryCharge);
   device.log_saturation_current =
       T(sheet.log_saturation_current) + T(sheet.saturation_current_exponent) * log_ratio + gap;
   device.log_gain_shift = ln(multiplier) + T(sheet.gain_exponent) * log_ratio;
-  device.cutoff_current =
-      T(sheet.cutoff_current) * e_to((junction - T(kReferenceTemperature)) * T(kLn2 / 10.0));
+  device.cutoff_current = T(sheet.cutoff_current) * e_to((junction - T(kReferenceTemperature)) * T(kLn2 / 10.0));
   return device;
 }
 

@@ -7,6 +7,7 @@
 
 #include <bit>
 #include <cmath>
+#include <cstddef>
 #include <cstdint>
 
 #include "numeric/pack.hpp"
@@ -30,16 +31,29 @@ inline constexpr double kRoundShift = 6755399441055744.0;  // 1.5 * 2^52: adding
 inline constexpr double kLn2High = 6.93147180369123816490e-01;  // upper bits of ln 2, exact times any |k| < 2^11
 inline constexpr double kLn2Low = 1.90821492927058770002e-10;
 
+/// c[0] + c[1] x + ... + c[n-1] x^(n-1) in four interleaved chains, so that no term waits for all others.
+template <std::size_t N, class T>
+T four_chains(const double (&c)[N], const T& x) {
+  const T x2 = x * x, x4 = x2 * x2;
+  T chain[4] = {T(0.0), T(0.0), T(0.0), T(0.0)};
+  for (std::size_t k = 0; k < 4; ++k) {
+    std::size_t i = k + (N - 1 - k) / 4 * 4;
+    chain[k] = T(c[i]);
+    for (; i >= 4; i -= 4) chain[k] = chain[k] * x4 + T(c[i - 4]);
+  }
+  return (chain[0] + x * chain[1]) + x2 * (chain[2] + x * chain[3]);
+}
+
 template <class T>
 T exponential(const T& x) {
   const T shifted = x * T(1.4426950408889634) + T(kRoundShift);
   const T k = shifted - T(kRoundShift);
   const T r = (x - k * T(kLn2High)) - k * T(kLn2Low);
-  constexpr double kInverseFactorial[] = {1.0,           1.0,           1.0 / 2,        1.0 / 6,         1.0 / 24,
-                                          1.0 / 120,     1.0 / 720,     1.0 / 5040,     1.0 / 40320,     1.0 / 362880,
-                                          1.0 / 3628800, 1.0 / 39916800, 1.0 / 479001600, 1.0 / 6227020800.0};
-  T p = T(kInverseFactorial[13]);
-  for (int i = 12; i >= 0; --i) p = p * r + T(kInverseFactorial[i]);
+  // 1/i!; the first two terms are added last, where rounding counts
+  constexpr double kTail[] = {1.0 / 2,       1.0 / 6,        1.0 / 24,        1.0 / 120,
+                              1.0 / 720,     1.0 / 5040,     1.0 / 40320,     1.0 / 362880,
+                              1.0 / 3628800, 1.0 / 39916800, 1.0 / 479001600, 1.0 / 6227020800.0};
+  const T p = T(1.0) + (r + r * r * four_chains(kTail, r));
   return from_bits(to_bits(p) + (to_bits(shifted) << 52), x);
 }
 
@@ -52,10 +66,10 @@ T logarithm(const T& x) {
   const T k = from_bits(exponent + std::bit_cast<std::uint64_t>(kRoundShift), x) - T(kRoundShift + 1024);
   const T f = (m - T(1)) / (m + T(1));
   const T s = f * f;
-  T p = T(1.0 / 21);
-  for (int i = 19; i >= 3; i -= 2) p = p * s + T(1.0 / i);
+  constexpr double kTail[] = {1.0 / 3,  1.0 / 5,  1.0 / 7,  1.0 / 9,  1.0 / 11,
+                              1.0 / 13, 1.0 / 15, 1.0 / 17, 1.0 / 19, 1.0 / 21};
   const T twice = f + f;
-  return k * T(kLn2High) + (twice + (twice * s * p + k * T(kLn2Low)));
+  return k * T(kLn2High) + (twice + (twice * s * four_chains(kTail, s) + k * T(kLn2Low)));
 }
 
 }  // namespace detail

@@ -11,6 +11,7 @@ namespace bandwright {
 namespace {
 
 constexpr std::size_t kMostFaults = 200;
+constexpr std::size_t kLongestPath = 200;  // bytes; every known one is shorter
 
 std::string joined(const std::string& parent, const std::string& key) {
   return parent.empty() ? key : parent + "." + key;
@@ -67,7 +68,8 @@ std::vector<std::string> option_names() {
 }  // namespace
 
 void Statements::object_at(const std::string& path, Fault fault) {
-  for (const std::string& above : upwards(path)) spoiled_.insert(above);
+  if (path.size() <= kLongestPath)
+    for (const std::string& above : upwards(path)) spoiled_.insert(above);
   if (faults_.size() < kMostFaults) faults_.push_back(std::move(fault));
   if (faults_.size() == kMostFaults) faults_.push_back({"", "", "fewer faults: the rest is not listed", ""});
 }

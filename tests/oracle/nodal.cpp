@@ -136,7 +136,7 @@ struct Peak {
   bool at_infinity = false;
 };
 
-/// The highest peak, or the limit at infinite frequency where |H| ends above every peak.
+/// The highest peak, or the limit at infinite frequency where no peak stands above it.
 Peak highest_peak(const Network& net, const std::vector<Real>& y) {
   const Real top = *std::max_element(y.begin(), y.end());
   Peak best;
@@ -148,7 +148,7 @@ Peak highest_peak(const Network& net, const std::vector<Real>& y) {
   }
   if (y.back() < 0.9L * top) return best;
   const Real limit = magnitude_in_fifty_digits(net, output, kLimit);
-  if (limit > best.value * (1 + kTie)) best = {log_frequency(kScanPoints - 1), limit, true};
+  if (limit * (1 + kTie) > best.value) best = {log_frequency(kScanPoints - 1), limit, true};
   return best;
 }
 

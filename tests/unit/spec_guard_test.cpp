@@ -56,6 +56,13 @@ TEST_CASE("a long value is shown cut") {
   CHECK(said.size() < 2000);
 }
 
+TEST_CASE("a long key is no more trouble than a short one") {
+  const std::string key = repeated("a.", 1000000);
+  CHECK(complaint("{\"" + key + "\": 1}").size() < 2000);
+  CHECK(complaint("{\"" + key + "\": 1, \"" + key + "\": 2}").size() < 4000);
+  CHECK(complaint("{\"requirements\": {\"" + key + "\": 1}}").size() < 2000);
+}
+
 TEST_CASE("a file cut short anywhere is a fault") {
   for (std::size_t length = 1; length + 1 < kFullSpec.size(); ++length) {
     INFO(length);
