@@ -87,7 +87,8 @@ std::string format_quantity(double value, Dimension dimension, int digits) {
   if (value == 0) return with_unit("0", "", row.shown);
   const Digits number = rounded(std::fabs(value), digits);
   const int power = prefix_power(number, row);
-  return (value < 0 ? "-" : "") + with_unit(placed(number, number.point - power, "."), prefix_text(power), row.shown);
+  const std::string sign = value < 0 ? "-" : "";
+  return sign + with_unit(placed(number, number.point - power, "."), prefix_text(power), row.shown);
 }
 
 std::string value_code(double value, Dimension dimension) {

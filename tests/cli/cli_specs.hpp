@@ -1,4 +1,5 @@
-// Specs and runs that the tests of the program share. The specs are invented and small: one transistor each.
+// Specs and runs that the tests of the program share. The specs are invented and small: one transistor each, and most
+// parts fixed, so that a search takes a moment only.
 #pragma once
 
 #include <string>
@@ -15,9 +16,11 @@ inline const std::string kEasySpec = R"({
   "load": {"resistance": "10k"},
   "requirements": {
     "gain": {"target": "30 dB", "tolerance": "2 dB"},
-    "lower_cutoff": {"target": "60 Hz", "tolerance": "30 %"},
+    "lower_cutoff": {"max": "60 Hz"},
     "upper_cutoff": {"min": "20 kHz"}
   },
+  "parts": {"pinned": {"upper_divider": "47k", "lower_divider": "10k", "input_coupling": "10 uF",
+                       "output_coupling": "10 uF", "bypass": "100 uF", "shunt": "absent"}},
   "devices": ["BC547B"],
   "search": {"candidates": 3}
 })";
@@ -27,6 +30,8 @@ inline const std::string kImpossibleSpec = R"({
   "supply": "3 V",
   "load": {"resistance": "1k"},
   "requirements": {"gain": "60 dB", "lower_cutoff": "60 Hz", "upper_cutoff": {"min": "20 kHz"}},
+  "parts": {"pinned": {"upper_divider": "47k", "input_coupling": "10 uF", "output_coupling": "10 uF",
+                       "bypass": "100 uF", "shunt": "absent"}},
   "devices": ["BC547B"],
   "search": {"candidates": 2}
 })";
@@ -39,8 +44,22 @@ inline const std::vector<std::string> kPartOptions = {
 
 /// The spec as options, without a file.
 inline const std::vector<std::string> kSpecOptions = {
-    "--gain",   "30dB", "--gain-tolerance", "2 dB",   "--lower-cutoff", "60Hz", "--upper-cutoff-min", "20kHz",
-    "--supply", "12V",  "--devices",        "BC547B", "--candidates",   "2"};
+    "--gain",
+    "30dB",
+    "--gain-tolerance",
+    "2 dB",
+    "--lower-cutoff-max",
+    "60Hz",
+    "--upper-cutoff-min",
+    "20kHz",
+    "--supply",
+    "12V",
+    "--devices",
+    "BC547B",
+    "--candidates",
+    "2",
+    "--pinned",
+    "upper_divider=47k,lower_divider=10k,input_coupling=10u,output_coupling=10u,bypass=100u,shunt=absent"};
 
 inline std::vector<std::string> joined(std::vector<std::string> words, const std::vector<std::string>& more) {
   words.insert(words.end(), more.begin(), more.end());

@@ -19,6 +19,7 @@ const std::vector<std::string> kWithSupply = {"design", "--supply",       "12V",
                                               "60Hz",   "--upper-cutoff", "20kHz"};
 
 std::vector<std::string> with_gain(const std::string& gain) { return joined(kWithSupply, {"--gain", gain}); }
+std::vector<std::string> with_gain_and(const std::vector<std::string>& more) { return joined(with_gain("30dB"), more); }
 std::vector<std::string> design(const std::vector<std::string>& more) {
   return joined(joined({"design"}, kSpecOptions), more);
 }
@@ -59,7 +60,7 @@ std::vector<Wrong> wrong_command_lines() {
       {design({"--output", "/"}), "Is a directory", 3},
       {design({"--output", "/no/such/folder/x.json"}), "/no/such/folder", 3},
       {design({"--catalogue", "/no/such/folder"}), "/no/such/folder", 3},
-      {design({"--devices", "BC547b9"}), "BC547b9"},
+      {with_gain_and({"--devices", "BC547b9"}), "BC547b9"},
       {with_gain(""), "gain"},
       {with_gain("34 x"), "34 x"},
       {with_gain("-"), "gain"},

@@ -2,6 +2,8 @@
 #   kind      static or shared          source    this project's folder
 #   built     a finished build of that kind, or empty: one is made here
 #   work      folder for all of it      compiler, generator, version
+cmake_minimum_required(VERSION 3.25)
+
 function(run)
   execute_process(COMMAND ${ARGN} RESULT_VARIABLE status OUTPUT_VARIABLE output ERROR_VARIABLE output)
   string(JOIN " " line ${ARGN})
@@ -22,15 +24,23 @@ set(ask_for -S ${source}/tests/install/stranger -D CMAKE_PREFIX_PATH=${work}/pre
 
 if(NOT built)
   set(built ${work}/build)
-  set(shared OFF)
+  set(build_shared OFF)
   if(kind STREQUAL "shared")
-    set(shared ON)
+    set(build_shared ON)
   endif()
-  run(${CMAKE_COMMAND} -S ${source} -B ${built} ${compile_with} -D CMAKE_CXX_FLAGS_DEBUG=-O0 -D BUILD_SHARED_LIBS=${shared})
+  run(${CMAKE_COMMAND} -S ${source} -B ${built} ${compile_with} -D CMAKE_CXX_FLAGS_DEBUG=-O1
+      -D BUILD_SHARED_LIBS=${build_shared})
   run(${CMAKE_COMMAND} --build ${built} --parallel 2)
 endif()
 file(REMOVE_RECURSE ${work}/prefix ${work}/stranger)
 run(${CMAKE_COMMAND} --install ${built} --prefix ${work}/prefix)
+file(GLOB_RECURSE libraries RELATIVE ${work}/prefix ${work}/prefix/*.a ${work}/prefix/*.so)
+set(output "${libraries}")
+if(kind STREQUAL "shared")
+  demand("^[^;]*libbandwright[.]so$")
+else()
+  demand("^[^;]*libbandwright[.]a$")
+endif()
 
 run(${CMAKE_COMMAND} ${ask_for} -B ${work}/stranger ${compile_with} -D wanted_version=${version})
 run(${CMAKE_COMMAND} --build ${work}/stranger)

@@ -19,14 +19,15 @@ double stability_of(const BookStage& book, double beta, double v_be) {
   const BiasTrial<double> t = bias_at_constant_vbe(book, beta, v_be);
   const BipolarParameters sheet = ideal_transistor(beta);
   const Circuit<double> c = circuit_of_book(book);
-  const HybridPi<double> h = hybrid_pi(at_temperature(sheet, kReferenceTemperature, 1.0), t.i_c, t.v_be, t.v_ce, t.gain);
+  const HybridPi<double> h =
+      hybrid_pi(at_temperature(sheet, kReferenceTemperature, 1.0), t.i_c, t.v_be, t.v_ce, t.gain);
   return stage_figures<double>(c, t, h, {}, {}, sheet, kReferenceTemperature)[index(Figure::stability_factor)];
 }
 
 }  // namespace
 
 TEST_CASE("divider bias, exact") {
-  // Sedra & Smith, Microelectronic Circuits, 5th ed., Ex 5.10; read through a transcription, book not opened
+  // Sedra & Smith, Microelectronic Circuits, 5th ed., example 5.10; read through a transcription, book not opened
   constexpr double kCurrents = 0.005;    // printed to three figures, 1.29 and 12.8
   constexpr double kVoltages = 0.003;    // 4.57 V and 8.6 V; the book rounds on the way
   constexpr double kResistance = 0.002;  // 33.3k
@@ -45,7 +46,7 @@ TEST_CASE("divider bias, exact") {
 }
 
 TEST_CASE("divider bias at two current gains") {
-  // Hambley, Electrical Engineering: Principles and Applications, edition not stated, Ex 13.7; read through a
+  // Hambley, Electrical Engineering: Principles and Applications, edition not stated, example 13.7; read through a
   // transcription, book not opened
   constexpr double kRounding = 0.003;  // printed to three figures
   const BookStage book{.supply = 15, .upper_divider = 10e3, .lower_divider = 5e3, .collector = 1e3, .emitter = 1e3};
@@ -62,8 +63,9 @@ TEST_CASE("divider bias at two current gains") {
 }
 
 TEST_CASE("self-bias and its stability factor") {
-  // Millman & Halkias, Integrated Electronics, edition not stated, Ex 9.1; read through a transcription, book not opened
-  constexpr double kRounding = 0.01;         // the current is printed as 1.35 and as 1.36 mA
+  // Millman & Halkias, Integrated Electronics, edition not stated, example 9.1; read through a transcription, book not
+  // opened
+  constexpr double kRounding = 0.01;          // the current is printed as 1.35 and as 1.36 mA
   constexpr double kStabilityDigits = 0.002;  // four figures
   const BookStage book{
       .supply = 22.5, .upper_divider = 90e3, .lower_divider = 10e3, .collector = 5.6e3, .emitter = 1e3};
@@ -81,7 +83,8 @@ TEST_CASE("self-bias and its stability factor") {
 }
 
 TEST_CASE("bias designed by stability factor, and solved back") {
-  // Millman & Halkias, Integrated Electronics, edition not stated, Ex 9.2; read through a transcription, book not opened
+  // Millman & Halkias, Integrated Electronics, edition not stated, example 9.2; read through a transcription, book not
+  // opened
   constexpr double kRounding = 0.002;  // four figures, V three
   const WantedBias wanted{.supply = 20, .collector_current = 2e-3, .collector_drop = 8, .emitter_voltage = 2};
   const BiasResistors start = bias_by_divider_current(wanted, 1, 0);
@@ -105,8 +108,8 @@ TEST_CASE("bias designed by stability factor, and solved back") {
 }
 
 TEST_CASE("drift of a germanium stage from 25 to 75 °C") {
-  // Millman & Halkias, Integrated Electronics, edition not stated, Ex 9.3; read through a transcription, book not opened.
-  // The book adds three first-order terms; the difference of two operating points is 2 % less.
+  // Millman & Halkias, Integrated Electronics, edition not stated, example 9.3; read through a transcription, book not
+  // opened. The book adds three first-order terms; the difference of two operating points is 2 % less.
   constexpr double kFirstOrder = 0.02;
   const BookStage plain{.supply = 20, .collector = 1e3, .emitter = 4.7e3};
   const double v_th = 0.2 + 4.7e3 * 1.5e-3 + (7.75e3 + 4.7e3) * (1.5e-3 - 56 * 1e-6) / 55;  // 1.5 mA when cold
@@ -119,8 +122,8 @@ TEST_CASE("drift of a germanium stage from 25 to 75 °C") {
 }
 
 TEST_CASE("four-resistor bias, analysed") {
-  // Kumar & Jain, Electronic Devices and Circuits, edition not stated, Ex 5.2; read through a transcription, book not
-  // opened
+  // Kumar & Jain, Electronic Devices and Circuits, edition not stated, example 5.2; read through a transcription, book
+  // not opened
   constexpr double kRounding = 0.003;  // three figures
   const BookStage book{
       .supply = 18, .upper_divider = 82e3, .lower_divider = 22e3, .collector = 5.6e3, .emitter = 1.2e3};
@@ -131,8 +134,8 @@ TEST_CASE("four-resistor bias, analysed") {
 }
 
 TEST_CASE("four-resistor bias, designed by thirds of the supply") {
-  // Kumar & Jain, Electronic Devices and Circuits, edition not stated, Ex 5.3; read through a transcription, book not
-  // opened
+  // Kumar & Jain, Electronic Devices and Circuits, edition not stated, example 5.3; read through a transcription, book
+  // not opened
   constexpr double kRounding = 0.003;  // printed exactly; what is left is arithmetic
   const WantedBias wanted{.supply = 12,
                           .collector_current = 1e-3,
@@ -154,20 +157,22 @@ TEST_CASE("four-resistor bias, designed by thirds of the supply") {
   };
   BookStage stiff = book;
   stiff.upper_divider = 8e3, stiff.lower_divider = 4e3;
-  for (const Row& row : {Row{50, 0.8632e-3, 0.9844e-3}, Row{100, 0.9259e-3, 0.9921e-3}, Row{150, 0.9492e-3, 0.9947e-3}}) {
+  for (const Row& row :
+       {Row{50, 0.8632e-3, 0.9844e-3}, Row{100, 0.9259e-3, 0.9921e-3}, Row{150, 0.9492e-3, 0.9947e-3}}) {
     INFO("beta " << row.beta);
     CHECK(emitter_current(bias_at_constant_vbe(book, row.beta, 0.7)) == Approx(row.loose).epsilon(kFull));
     CHECK(emitter_current(bias_at_constant_vbe(stiff, row.beta, 0.7)) == Approx(row.stiff).epsilon(kFull));
   }
-  // Sedra & Smith, Microelectronic Circuits, 5th ed., Ex 5.13, the same circuit: 0.93 and 0.99 mA, from memory, extra
+  // Sedra & Smith, Microelectronic Circuits, 5th ed., example 5.13, the same circuit: 0.93 and 0.99 mA, from memory,
+  // extra
   constexpr double kTwoFigures = 0.0055;
   CHECK(emitter_current(bias_at_constant_vbe(book, 100, 0.7)) == Approx(0.93e-3).epsilon(kTwoFigures));
   CHECK(emitter_current(bias_at_constant_vbe(stiff, 100, 0.7)) == Approx(0.99e-3).epsilon(kTwoFigures));
 }
 
 TEST_CASE("stability factors against leakage and VBE") {
-  // Kumar & Jain, Electronic Devices and Circuits, edition not stated, Ex 5.10; read through a transcription, book not
-  // opened. The supply is not printed; neither factor depends on it.
+  // Kumar & Jain, Electronic Devices and Circuits, edition not stated, example 5.10; read through a transcription, book
+  // not opened. The supply is not printed; neither factor depends on it.
   constexpr double kRounding = 0.003;  // three figures
   const BookStage book = with_divider({.supply = 20, .collector = 1e3, .emitter = 1e3}, 10e3, 3);
   CHECK(stability_of(book, 100, 0.7) == Approx(10.0).epsilon(kRounding));
@@ -177,7 +182,8 @@ TEST_CASE("stability factors against leakage and VBE") {
 
   // one base resistor of 240k: the lower one is left out
   const BookStage one_resistor{.supply = 20, .upper_divider = 240e3, .collector = 1e3, .emitter = 1e3};
-  const double moved = bias_at_constant_vbe(one_resistor, 100, 0.53).i_c - bias_at_constant_vbe(one_resistor, 100, 0.7).i_c;
+  const double moved =
+      bias_at_constant_vbe(one_resistor, 100, 0.53).i_c - bias_at_constant_vbe(one_resistor, 100, 0.7).i_c;
   CHECK(moved / -0.17 == Approx(-2.933e-4).epsilon(kRounding));
   CHECK(moved == Approx(50e-6).epsilon(kRounding));
   CHECK(moved == Approx(49.85e-6).epsilon(kFull));

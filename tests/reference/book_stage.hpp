@@ -110,11 +110,18 @@ inline TransferFunction response(const BookStage& b, const HybridPi<double>& h) 
   return {t.numerator.c, t.denominator.c};
 }
 
-/// Peak gain and half-power frequencies of the exact response.
-inline Band band_of(const BookStage& b, const HybridPi<double>& h) {
-  const Crossings c = find_crossings(transfer(circuit_of_book(b), h), 0);
+/// Gain and half-power frequencies of the exact response; the gain at its peak, or at a stated frequency.
+inline Band band_of(const BookStage& b, const HybridPi<double>& h, double frequency = 0) {
+  const double omega = 2 * kPi * frequency;
+  const Crossings c = find_crossings(transfer(circuit_of_book(b), h), omega * omega);
   const auto hertz = [](double u) { return std::sqrt(u) / (2 * kPi); };
   return {hertz(c.reference), std::sqrt(c.gain_squared), hertz(c.lower), hertz(c.upper)};
+}
+
+/// Examples of the low side have no upper corner, so no peak: the gain is taken far above every lower corner.
+inline Band band_without_top(const BookStage& b, const HybridPi<double>& h) {
+  constexpr double kFarAbove = 1e9;  // Hz
+  return band_of(b, h, kFarAbove);
 }
 
 /// The published one-at-a-time forms for a transistor given by its small-signal elements.
