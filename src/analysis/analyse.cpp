@@ -1,5 +1,4 @@
 #include <bandwright/analysis.hpp>
-
 #include <cmath>
 
 #include "analysis/bias_reuse.hpp"
@@ -47,8 +46,8 @@ Analysis analyse_response(const Stage& stage, const Circuit<double>& circuit, co
     const PoleEstimate<double> e = pole_estimate(driven, h);
     a.band = {kNotComputed, e.gain, e.lower, e.upper};
   }
-  a.figures = stage_figures<double>(circuit, t, h, {a.band.gain, a.band.lower, a.band.upper}, definition,
-                                    *stage.device, a.point.junction_temperature);
+  a.figures = stage_figures<double>(circuit, t, h, {a.band.gain, a.band.lower, a.band.upper}, definition, *stage.device,
+                                    a.point.junction_temperature);
   return a;
 }
 

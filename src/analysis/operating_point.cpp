@@ -23,12 +23,19 @@ double first_guess(const Circuit<double>& c, const Bipolar<double>& device, doub
   return log_current(device.thermal_voltage * (rough - device.log_saturation_current));
 }
 
+/// ln of the collector current at which VCE comes to 0. Leakage out of the base adds to what RE carries.
+double highest_current(const Circuit<double>& c, const Bipolar<double>& device) {
+  const double r_e = c[Role::emitter] + c[Role::emitter_bypassed], r_total = c[Role::collector] + r_e;
+  const double without_leakage = ln(c.supply / r_total);
+  const double gain = e_to(gain_point(device.sheet->gain, without_leakage).log_gain + device.log_gain_shift);
+  return ln((c.supply + device.cutoff_current * (1 + 1 / gain) * r_e) / r_total);
+}
+
 }  // namespace
 
 BiasSolution solve_bias(const Circuit<double>& c, const Bipolar<double>& device, double guess) {
-  const double r_total = c[Role::collector] + c[Role::emitter] + c[Role::emitter_bypassed];
-  double high = ln(c.supply / r_total);
-  double low = std::min(device.log_saturation_current - 1, high - 1);
+  double high = highest_current(c, device);
+  double low = std::min(device.log_saturation_current, high) - 50;
   const double tolerance =
       kResidual * c.supply * c[Role::lower_divider] / (c[Role::upper_divider] + c[Role::lower_divider]);
   BiasSolution s;

@@ -1,5 +1,4 @@
 #include <bandwright/analysis.hpp>
-
 #include <cmath>
 
 #include "analysis/figure_equations.hpp"
@@ -10,8 +9,9 @@ namespace bandwright {
 namespace {
 
 constexpr const char* kHighNames[kHighCapacitors] = {
-    "base-emitter Cpi",       "collector-base Cmu", "C4 shunt",             "load capacitance",
-    "source capacitance",     "stray, base to 0 V", "stray, collector to 0 V", "stray, collector to base"};
+    "base-emitter Cpi",        "collector-base Cmu",      "C4 shunt",
+    "load capacitance",        "source capacitance",      "stray, base to 0 V",
+    "stray, collector to 0 V", "stray, collector to base"};
 constexpr Role kLowRoles[3] = {Role::input_coupling, Role::output_coupling, Role::bypass};
 
 std::string name(Role role) { return std::string(info(role).designator) + " " + info(role).label; }
@@ -49,8 +49,8 @@ PoleModel pole_model(const Stage& stage, const Analysis& analysis, const GainDef
   model.textbook_gain = m.beta * r_l / h_ie / degeneration * m.r_in / (m.r_in + c.source_resistance);
   const double r_source = source_side(m, c.source_resistance) + m.r_bb;
   const double r_input = parallel(r_source, m.r_pi * degeneration);
-  const double c_miller = h.input_capacitance / degeneration +
-                          h.feedback_capacitance * (1 + h.transconductance * r_l / degeneration);
+  const double c_miller =
+      h.input_capacitance / degeneration + h.feedback_capacitance * (1 + h.transconductance * r_l / degeneration);
   model.miller_upper_cutoff = 1 / (2 * kPi * r_input * c_miller);
 
   for (std::size_t i = 0; i < e.low.size(); ++i) {

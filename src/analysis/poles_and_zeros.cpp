@@ -1,8 +1,6 @@
-#include <bandwright/analysis.hpp>
-
 #include <algorithm>
+#include <bandwright/analysis.hpp>
 #include <cmath>
-
 #include <unsupported/Eigen/Polynomials>
 
 #include "units/constants.hpp"

@@ -11,6 +11,8 @@ namespace {
 constexpr double kStep = 1.7782794100389228;  // of u = omega^2: eight samples a decade of frequency
 constexpr double kRim = 16;                   // scan beyond the outermost break, in u
 constexpr double kBeyond = 1e16;              // how far past the rim a cutoff is sought, in u
+constexpr double kFar = 1e12;                 // beyond the rim, in u: as good as infinite frequency
+constexpr double kEqualPeaks = 2e-9;          // of |H|^2: peaks closer than this are equal
 constexpr int kMaxSamples = 320;              // forty decades of frequency
 constexpr std::size_t kLanes = 2;             // frequencies side by side: what every x86-64 offers
 
@@ -112,18 +114,19 @@ double crossing_between(const Transfer<double>& h, double level, double above, d
 }
 
 /// Highest peak among the samples; peaks equal within 1e-9 in |H|: the lower frequency.
-int highest_peak(const Transfer<double>& h, const Samples& s, double& peak_u, double& peak_h) {
+void highest_peak(const Transfer<double>& h, const Samples& s, double& peak_u, double& peak_h) {
   const double top = *std::max_element(s.h.begin(), s.h.begin() + s.count);
-  int at = 0;
   peak_h = 0;
   for (int i = 0; i < s.count; ++i) {
     const double left = i > 0 ? s.h[i - 1] : 0, right = i + 1 < s.count ? s.h[i + 1] : 0;
     if (s.h[i] < 0.8 * top || s.h[i] < left || s.h[i] < right) continue;
     const double u = peak_between(h, s.u[std::max(i - 1, 0)], s.u[std::min(i + 1, s.count - 1)], s.u[i]);
     const double value = gain_squared(h, u);
-    if (value > peak_h * (1 + 2e-9)) at = i, peak_u = u, peak_h = value;
+    if (value > peak_h * (1 + kEqualPeaks)) peak_u = u, peak_h = value;
   }
-  return at;
+  // where a capacitive divider is left at infinite frequency the response may be highest there
+  const double far_u = s.u[s.count - 1] * kFar, far_h = gain_squared(h, far_u);
+  if (far_h > peak_h * (1 + kEqualPeaks)) peak_u = far_u, peak_h = far_h;
 }
 
 /// From `reference` outwards along the samples to the first one under the level, then the crossing itself.

@@ -1,5 +1,4 @@
 #include <bandwright/analysis.hpp>
-
 #include <cmath>
 
 #include "analysis/figure_equations.hpp"
@@ -16,8 +15,8 @@ constexpr std::size_t kDirections = 2;
 using Lanes = Pack<kDirections>;
 using Number = Dual<Lanes>;
 
-/// From the converged doubles one Newton step a crossing carries the exact derivative; the peak needs none, since |H| is
-/// stationary there (envelope theorem).
+/// From the converged doubles one Newton step a crossing carries the exact derivative; the peak needs none, since |H|
+/// is stationary there (envelope theorem).
 BandOf<Number> exact_band(const Analysis& a, const Circuit<Number>& circuit, const HybridPi<Number>& h) {
   const Transfer<Number> response = transfer(circuit, h);
   const Number gain_2 = gain_squared(response, Number(omega_squared(a.band.reference)));

@@ -1,5 +1,4 @@
 #include <bandwright/analysis.hpp>
-
 #include <cmath>
 
 #include "analysis/operating_point.hpp"

@@ -87,7 +87,7 @@ Command design_command() {
           "Reads a spec (a JSON file, - for standard input, or only options), searches every fitting transistor and "
           "variant for purchasable parts, and prints ranked candidates, each recomputed exactly with the parts as they "
           "are sold. A result document is accepted in the place of a spec: its spec is read.",
-          {"bandwright design examples/hydrophone.json",
+          {"bandwright design examples/hydrophone-line.json",
            "bandwright design --gain 34dB --lower-cutoff 40Hz --upper-cutoff 20kHz --supply 12V --load-resistance 10k",
            "bandwright design stage.json --rank sensitivity --format json -o result.json",
            "bandwright design stage.json --supply 9V --print-spec"},

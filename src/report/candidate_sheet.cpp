@@ -13,6 +13,9 @@ namespace {
 // A band narrower than this has a peak that stays visibly under the idealised midband gain.
 constexpr double kNarrowBand = 30;
 
+// Smaller shares of a cutoff are not listed one by one.
+constexpr double kSmallestShare = 0.005;
+
 std::string quantity(double value, Dimension dimension) { return format_quantity(value, dimension); }
 
 // What the part must stand: a resistor's power, a capacitor's voltage.
@@ -110,7 +113,7 @@ void add_figures(TextSheet& sheet, const Candidate& candidate, const Spec& spec)
 
 void add_operating_point(TextSheet& sheet, const Candidate& candidate) {
   sheet.heading("Operating point");
-  TextGrid grid{{{"", false}, {"", false}, {"value", true}, {"usual (common practice, no source)", false}}, {}, {3}};
+  TextGrid grid{{{"", false}, {"", false}, {"value", true}, {"usual", false}}, {}, {3}};
   const std::map<Figure, std::string> usual = {
       {Figure::collector_emitter_share, "near half"},
       {Figure::emitter_voltage_share, "about a tenth, or 1 V"},
@@ -122,6 +125,7 @@ void add_operating_point(TextSheet& sheet, const Candidate& candidate) {
               hint == usual.end() ? "" : hint->second});
   }
   sheet.grid(grid);
+  sheet.line("usual: common practice, no source");
 }
 
 std::string shares_text(const std::vector<TimeConstant>& constants) {
@@ -129,10 +133,13 @@ std::string shares_text(const std::vector<TimeConstant>& constants) {
   std::stable_sort(sorted.begin(), sorted.end(),
                    [](const TimeConstant& a, const TimeConstant& b) { return a.share > b.share; });
   std::vector<std::string> words;
-  for (const TimeConstant& one : sorted)
+  for (const TimeConstant& one : sorted) {
+    if (one.share < kSmallestShare) continue;
     words.push_back(
         fmt::format("{} {:.0f} % ({})", one.capacitor, 100 * one.share, quantity(one.frequency, Dimension::frequency)));
-  return join(words, ", ");
+  }
+  const bool some_left_out = words.size() < sorted.size();
+  return join(words, ", ") + (some_left_out ? ", the rest under 0.5 % each" : "");
 }
 
 void add_pole_model(TextSheet& sheet, const Candidate& candidate) {

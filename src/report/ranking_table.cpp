@@ -39,8 +39,11 @@ void add_titles(TextSheet& sheet, const DesignResult& result) {
 }
 
 void add_shortfalls(TextSheet& sheet, const DesignResult& result) {
-  for (const Candidate& candidate : result.candidates)
-    for (const Shortfall& one : candidate.shortfalls) sheet.item(fmt::format("{}: {}", candidate.rank, one.text));
+  for (const Candidate& candidate : result.candidates) {
+    std::vector<std::string> texts;
+    for (const Shortfall& one : candidate.shortfalls) texts.push_back(one.text);
+    if (!texts.empty()) sheet.item(fmt::format("{}: {}", candidate.rank, join(texts, "; ")));
+  }
 }
 
 bool any_shortfall(const DesignResult& result) {
@@ -53,8 +56,9 @@ bool any_shortfall(const DesignResult& result) {
 
 void add_ranking(TextSheet& sheet, const DesignResult& result) {
   if (result.candidates.empty()) return;
-  sheet.heading(result.ranked_by == RankBy::error ? "Candidates, smallest error first"
-                                                  : "Candidates, least sensitive to tolerances first");
+  sheet.heading(result.ranked_by == RankBy::error
+                    ? "Candidates by error in steps of 0.05, then by tolerance sensitivity"
+                    : "Candidates by tolerance sensitivity");
   const auto symbol = [](Figure figure) { return std::string(info(figure).symbol); };
   TextGrid grid;
   grid.columns = {{"rank", true},

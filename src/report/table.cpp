@@ -45,10 +45,17 @@ void add_cautions(TextSheet& sheet) {
   sheet.heading("Before building");
   sheet.line(
       "At most 60 V DC between any two nodes, from a battery or a certified isolated supply; mind polarity and rating; "
-      "eye protection at first power-up; discharge before touching; parts may be hot.");
-  sheet.line(
-      "A paper design, to be built and measured; not for medical or safety use; local codes and licensed practice come "
-      "first. In full: README.md, section Cautions, and --format json.");
+      "eye protection at first power-up; discharge before touching; parts may be hot. A paper design: build and "
+      "measure; "
+      "not for medical or safety use; local codes come first. In full: README.md, Cautions.");
+}
+
+// How to see what the sheet leaves out.
+std::string closing_text(const DesignResult& result) {
+  const std::string program = fmt::format("bandwright {}", version());
+  if (result.candidates.size() < 2) return program;
+  return program +
+         "; another candidate in full: --format json -o result.json, then bandwright check result.json --pick 2";
 }
 
 }  // namespace
@@ -67,7 +74,7 @@ std::string write_table(const DesignResult& result, const TableStyle& style) {
   if (result.met) add_list(sheet, "Explanations", result.explanations);
   add_cautions(sheet);
   sheet.space();
-  sheet.paragraph(std::string("bandwright ") + version());
+  sheet.paragraph(closing_text(result));
   return sheet.text();
 }
 

@@ -78,7 +78,7 @@ TEST_CASE("the same bytes on any number of threads, and twice") {
   CHECK(design_easy({"--threads", "1", "--format", "json"}).out == one.out);
 }
 
-TEST_CASE("--rank sensitivity puts the least sensitive first") {
+TEST_CASE("option --rank sensitivity puts the least sensitive first") {
   const Json document = Json::parse(design_easy({"--rank", "sensitivity", "--format", "json"}).out);
   CHECK(document["ranked_by"] == "tolerance_sensitivity");
 }

@@ -45,7 +45,7 @@ TEST_CASE("a written file is complete and stands alone") {
   CHECK(entries(folder.path()) == 1);
 }
 
-TEST_CASE("--output - is standard output, and --quiet says nothing") {
+TEST_CASE("option --output - is standard output, and --quiet says nothing") {
   const TemporaryFolder folder;
   CHECK(run_bandwright({kCatalogue, "-o", "-"}).out == run_bandwright({kCatalogue}).out);
   CHECK(run_bandwright({kCatalogue, "-o", "x", "--quiet"}, in_folder(folder.path())).err.empty());

@@ -84,16 +84,28 @@ bool has_kink(const Analysis& a, Figure figure) {
   return (figure == Figure::output_swing || figure == Figure::input_overload) && std::fabs(sides - 1) < kKink;
 }
 
+/// Central differences of every figure in ln x: an error of h^2 taken out by a second step twice as long.
+FigureValues differences(const RandomCircuit& c, double temperature, Cause cause) {
+  const auto over = [&](double h) {
+    const FigureValues up = held(c, temperature, cause, std::exp(h)), down = held(c, temperature, cause, std::exp(-h));
+    FigureValues d;
+    for (std::size_t i = 0; i < d.size(); ++i) d[i] = std::log(up[i] / down[i]) / (2 * h);
+    return d;
+  };
+  const FigureValues once = over(kStep), twice = over(2 * kStep);
+  FigureValues d;
+  for (std::size_t i = 0; i < d.size(); ++i) d[i] = (4 * once[i] - twice[i]) / 3;
+  return d;
+}
+
 void against_analysis(const RandomCircuit& c, const Analysis& a, const Sensitivity& s, Cause cause,
                       const std::string& name, Agreement& agreement) {
-  const FigureValues up = held(c, a.point.junction_temperature, cause, std::exp(kStep));
-  const FigureValues down = held(c, a.point.junction_temperature, cause, std::exp(-kStep));
+  const FigureValues expected = differences(c, a.point.junction_temperature, cause);
   for (const bandwright::FigureInfo& f : bandwright::figures()) {
-    const double found = s[index(f.figure)][cause];
-    const double expected = std::log(up[index(f.figure)] / down[index(f.figure)]) / (2 * kStep);
-    INFO(name << " " << f.key << " cause " << cause << ": " << found << " against " << expected);
-    CHECK(std::isnan(found) == std::isnan(expected));
-    if (!std::isnan(found) && !has_kink(a, f.figure)) agreement.add(std::fabs(found - expected), name + " " + f.key);
+    const double found = s[index(f.figure)][cause], difference = expected[index(f.figure)];
+    INFO(name << " " << f.key << " cause " << cause << ": " << found << " against " << difference);
+    CHECK(std::isnan(found) == std::isnan(difference));
+    if (!std::isnan(found) && !has_kink(a, f.figure)) agreement.add(std::fabs(found - difference), name + " " + f.key);
   }
 }
 
