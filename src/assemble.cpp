@@ -1,10 +1,9 @@
 #include "assemble.hpp"
 
 #include <algorithm>
+#include <bandwright/search.hpp>
 #include <cmath>
 #include <set>
-
-#include <bandwright/search.hpp>
 
 #include "from_memory.hpp"
 
@@ -15,9 +14,11 @@ namespace {
 constexpr double kNarrowBand = 30;  // fH/fL below which A stands visibly under the idealised midband gain
 
 std::string gain_words(const Spec& spec) {
-  std::string words = spec.gain_from_input ? "input node (between source resistance and input coupling capacitor) to load"
-                                           : "source EMF to load";
-  words += spec.gain_at ? ", at " + format_quantity(*spec.gain_at, Dimension::frequency) : ", at the peak of the response";
+  std::string words = spec.gain_from_input
+                          ? "input node (between source resistance and input coupling capacitor) to load"
+                          : "source EMF to load";
+  words +=
+      spec.gain_at ? ", at " + format_quantity(*spec.gain_at, Dimension::frequency) : ", at the peak of the response";
   return "gain: " + words;
 }
 
@@ -39,7 +40,8 @@ std::vector<std::string> general_assumptions(const Spec& spec) {
           format_quantity(spec.ambient.nominal, Dimension::temperature),
       "searched: stages with VCE of at least 1 V and IC RC of at least 0.5 V, within the transistor's limits",
       "ratings: DC voltage at the highest supply with nominal parts; no worst case yet"};
-  if (spec.ambient.nominal < 293.15) list.push_back("electrolytics lose 0.5 % for each kelvin below 20 °C (from memory)");
+  if (spec.ambient.nominal < 293.15)
+    list.push_back("electrolytics lose 0.5 % for each kelvin below 20 °C (from memory)");
   return list;
 }
 
@@ -60,10 +62,11 @@ void add_notes(const Spec& spec, const Stage& stage, const GainDefinition& defin
   const Band& band = c.analysis.band;
   if (band.upper / band.lower < kNarrowBand) {
     const double ideal = c.analysis.figures[index(Figure::midband_gain)];
-    c.notes["midband_gain"] = "narrow band, fH/fL = " + format_quantity(band.upper / band.lower, Dimension::fraction, 3) +
-                              ": the idealised midband gain is " + format_quantity(ideal, Dimension::gain) + ", " +
-                              format_quantity(20 * std::log10(ideal / band.gain), Dimension::fraction, 3) +
-                              " dB over the gain; cutoffs are taken from the gain";
+    c.notes["midband_gain"] =
+        "narrow band, fH/fL = " + format_quantity(band.upper / band.lower, Dimension::fraction, 3) +
+        ": the idealised midband gain is " + format_quantity(ideal, Dimension::gain) + ", " +
+        format_quantity(20 * std::log10(ideal / band.gain), Dimension::fraction, 3) +
+        " dB over the gain; cutoffs are taken from the gain";
   }
   for (const RoleInfo& r : roles()) {
     const auto& pin = spec.parts.pinned[index(r.role)];
@@ -98,7 +101,8 @@ Spec with_device(Spec spec, const std::string& device) {
   return spec;
 }
 
-Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogue& catalogue, const OfferedParts& parts) {
+Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogue& catalogue,
+                   const OfferedParts& parts) {
   Candidate c;
   c.device = device.parameters.type;
   c.parameters = device.parameters;
@@ -143,7 +147,7 @@ void finish(DesignResult& result, const std::vector<Standing>& standings, const 
     Candidate& c = result.candidates[i];
     c.rank = static_cast<int>(i) + 1;
     if (i < titles.size()) c.best_at = titles[i];
-    result.met = result.met || c.shortfalls.empty();
+    result.met = result.met || (c.shortfalls.empty() && c.analysis.point.state == BiasState::active);
     if (!described.insert(c.device).second) continue;
     const auto used = std::find_if(devices.begin(), devices.end(),
                                    [&](const DerivedDevice& d) { return d.parameters.type == c.device; });

@@ -14,10 +14,11 @@ std::vector<const Transistor*> fitting_transistors(const Spec& spec, const Catal
 Spec with_device(Spec spec, const std::string& device);
 
 /// Everything that is reported of one stage.
-Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogue& catalogue, const OfferedParts& parts);
+Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogue& catalogue,
+                   const OfferedParts& parts);
 
-/// Ranks, titles, what rests on memory, explanations, and whether the spec is met. `standings` as in the candidates; may be
-/// empty for a check.
+/// Ranks, titles, what rests on memory, explanations, and whether the spec is met. `standings` as in the candidates;
+/// may be empty for a check.
 void finish(DesignResult& result, const std::vector<Standing>& standings, const std::vector<DerivedDevice>& devices,
             const std::string& nearest_miss);
 

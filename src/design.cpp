@@ -1,12 +1,11 @@
 // The whole pipeline: the file to read first.
 //
-//   spec -> catalogue -> device -> stage -> analysis -> margins -> assessment -> ranking -> search -> purchase -> report
-#include <bandwright/design.hpp>
-
+//   spec -> catalogue -> device -> stage -> analysis -> margins -> assessment -> ranking -> search -> purchase ->
+//   report
 #include <algorithm>
-#include <cmath>
-
+#include <bandwright/design.hpp>
 #include <bandwright/search.hpp>
+#include <cmath>
 
 #include "assemble.hpp"
 
@@ -28,8 +27,7 @@ DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOp
   // where a ceiling rules out every device the nearest candidates are still shown
   const std::vector<DerivedDevice>& tried = left.empty() ? devices : left;
 
-  const SearchOutcome outcome =
-      search(spec, catalogue, tried, {options.rank_by, options.threads, options.keep_going});
+  const SearchOutcome outcome = search(spec, catalogue, tried, {options.rank_by, options.threads, options.keep_going});
   result.interrupted = outcome.interrupted;
 
   std::vector<Standing> standings;
@@ -55,6 +53,7 @@ DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::stri
     if (value > 0) parts[index(r.role)] = resolve_value(catalogue, spec, r.role, value);
   }
   DesignResult result = empty_result(spec, RankBy::error);
+  result.searched = false;
   result.candidates.push_back(assemble(spec, devices.front(), catalogue, parts));
   finish(result, {}, devices, "");
   return result;

@@ -9,7 +9,7 @@ namespace bandwright {
 
 namespace {
 
-constexpr double kGainShown = 0.1;   // dB
+constexpr double kGainShown = 0.1;  // dB
 constexpr double kShareShown = 0.01;
 
 /// The larger move of a figure under the two shifts, as |ln|; NaN where one has no value.
@@ -40,6 +40,7 @@ std::vector<std::string> memory_effects(const Spec& spec, const DerivedDevice& d
   const auto figures_with = [&](const BipolarParameters& p) {
     return analyse(Stage{candidate.working_values, &p, surroundings(spec)}, definition).figures;
   };
+  std::string idle;  // those that move nothing worth a line of their own
   for (const WeakInput& w : device.weak_inputs) {
     const FigureValues low = figures_with(w.low), high = figures_with(w.high);
     std::string moves;
@@ -47,9 +48,16 @@ std::vector<std::string> memory_effects(const Spec& spec, const DerivedDevice& d
       const double moved = move(candidate.analysis.figures, low, high, f);
       if (shown(f, moved)) moves += (moves.empty() ? "" : ", ") + words(f, moved);
     }
-    lines.push_back(device.parameters.type + " " + w.name + " (" + w.description + "): " +
-                    (moves.empty() ? "moves gain by less than 0.1 dB and no cutoff by 1 %"
-                                   : "in candidate " + std::to_string(candidate.rank) + " moves " + moves));
+    const std::string input = w.name + " (" + w.description + ")";
+    if (moves.empty()) {
+      idle += (idle.empty() ? "" : ", ") + input;
+    } else {
+      lines.push_back(device.parameters.type + " " + input + ": in candidate " + std::to_string(candidate.rank) +
+                      " moves " + moves);
+    }
+  }
+  if (!idle.empty()) {
+    lines.push_back(device.parameters.type + " " + idle + ": moves gain by less than 0.1 dB and no cutoff by 1 %");
   }
   return lines;
 }

@@ -117,8 +117,8 @@ struct PolesAndZeros {
 };
 PolesAndZeros poles_and_zeros(const TransferFunction& transfer);
 
-/// DC voltage across each capacitor role (first node minus second, signed for the magnitudes' polarity) and power in
-/// each resistor role, at a supply magnitude other than nominal; junction rise held.
+/// DC voltage across each role, first node minus second, with its real sign (negative supply: mirrored), and power in
+/// each resistor, at a supply magnitude other than nominal; junction rise held.
 struct Stress {
   std::array<double, kRoleCount> volts{};
   std::array<double, kRoleCount> watts{};

@@ -6,10 +6,10 @@
 //   const Transistor* t = catalogue.find_transistor("BC547B");
 #pragma once
 
+#include <array>
 #include <bandwright/fault.hpp>
 #include <bandwright/quantity.hpp>
 #include <bandwright/spec.hpp>
-#include <array>
 #include <filesystem>
 #include <map>
 #include <optional>

@@ -50,6 +50,7 @@ struct DesignResult {
   RankBy ranked_by = RankBy::error;
   bool met = false;  ///< at least one candidate meets every requirement nominally
   bool interrupted = false;
+  bool searched = true;  ///< false: given parts were recomputed
   std::vector<std::string> definitions;
   std::vector<std::string> assumptions;
   std::vector<std::string> from_memory;

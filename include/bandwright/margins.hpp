@@ -21,8 +21,8 @@ double requirement_error(const Requirement& requirement, const FigureInfo& figur
 double requirement_margin(const Requirement& requirement, const FigureInfo& figure, double value);
 bool meets(const Requirement& requirement, double value);
 
-/// The error with its sign, for searches that need slopes: 0 at the target or inside the limits, +1 at U, -1 at L, on an
-/// open side not capped, without the step of 1 past a lone limit.
+/// The error with its sign, for searches that need slopes: 0 at the target or inside the limits, +1 at U, -1 at L, on
+/// an open side not capped, without the step of 1 past a lone limit.
 struct Deviation {
   double value = 0;
   double slope = 0;  ///< d value / d ln x

@@ -1,23 +1,22 @@
 // Search: from a spec to stages of preferred values.
 //
 // Devices that a closed-form ceiling rules out are dropped. For the others and all six variants a continuous relaxation
-// runs from several starts (on the pole model, then on the exact response), its points are snapped to the offered values,
-// and the best are refined until no change of one part, nor of any pair of parts, by one or two neighbouring values
-// improves the order. The answer depends on spec, catalogue and seed alone, not on the number of threads.
+// runs from several starts (on the pole model, then on the exact response), its points are snapped to the offered
+// values, and the best are refined until no change of one part, nor of any pair of parts, by one or two neighbouring
+// values improves the order. The answer depends on spec, catalogue and seed alone, not on the number of threads.
 //
 // A stage must, nominally, be active, with VCE >= 1 V and IC RC >= 0.5 V, within the transistor's current, power and
 // junction limits, and every part must have a rating that holds at the highest supply.
 #pragma once
-
-#include <functional>
-#include <string>
-#include <vector>
 
 #include <bandwright/catalogue.hpp>
 #include <bandwright/device.hpp>
 #include <bandwright/ranking.hpp>
 #include <bandwright/spec.hpp>
 #include <bandwright/stage.hpp>
+#include <functional>
+#include <string>
+#include <vector>
 
 namespace bandwright {
 

@@ -1,9 +1,7 @@
-#include <bandwright/assessment.hpp>
-
 #include <algorithm>
-#include <cmath>
-
+#include <bandwright/assessment.hpp>
 #include <bandwright/margins.hpp>
+#include <cmath>
 
 #include "device/gain_curve.hpp"
 #include "numeric/elementary.hpp"

@@ -147,6 +147,10 @@ Confirmation confirm(const Subject& subject, const DesignResult& result, const s
   return {agreement_text(agreement, name, subject.stored->rank), agreement.differing.empty()};
 }
 
+bool works(const DesignResult& result) {
+  return !result.candidates.empty() && result.candidates.front().analysis.point.state == BiasState::active;
+}
+
 int run_check(const Arguments& arguments) {
   at_most_operands(arguments, 1, "check takes one spec or result document");
   if (arguments.operands.empty() && arguments.overrides.empty() && arguments.values.empty())
@@ -168,7 +172,7 @@ int run_check(const Arguments& arguments) {
     complain(confirmation.text);
   destination.write(text);
   tell_written(destination, arguments);
-  return confirmation.agrees ? status_of(result) : kNotMet;
+  return confirmation.agrees && works(result) ? status_of(result) : kNotMet;
 }
 
 }  // namespace

@@ -1,6 +1,5 @@
-#include <bandwright/margins.hpp>
-
 #include <algorithm>
+#include <bandwright/margins.hpp>
 #include <cmath>
 
 #include "numeric/elementary.hpp"
@@ -19,8 +18,7 @@ double log_distance(double from, double to) { return std::max(ln(to / from), ln(
 
 /// Gain, frequencies and resistances are judged by ratio, everything else by difference.
 bool by_ratio(const FigureInfo& f) {
-  return f.dimension == Dimension::gain || f.dimension == Dimension::frequency ||
-         f.dimension == Dimension::resistance;
+  return f.dimension == Dimension::gain || f.dimension == Dimension::frequency || f.dimension == Dimension::resistance;
 }
 
 double side_margin(double distance, double whole, double least) { return distance / std::max(whole, least); }

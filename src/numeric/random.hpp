@@ -18,7 +18,7 @@ public:
     return z ^ (z >> 31);
   }
   double uniform() { return static_cast<double>(next() >> 11) * 0x1p-53; }  ///< 0 <= x < 1
-  int below(int n) { return static_cast<int>(uniform() * n); }             ///< 0 .. n-1
+  int below(int n) { return static_cast<int>(uniform() * n); }              ///< 0 .. n-1
 
 private:
   std::uint64_t state_;

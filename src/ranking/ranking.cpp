@@ -1,6 +1,5 @@
-#include <bandwright/ranking.hpp>
-
 #include <algorithm>
+#include <bandwright/ranking.hpp>
 #include <cmath>
 #include <limits>
 #include <tuple>
@@ -101,9 +100,8 @@ std::vector<std::vector<std::string>> best_at(const std::vector<Standing>& list)
   };
   std::vector<std::vector<std::string>> titles(list.size());
   for (const Title& t : kTitles) {
-    const auto best = std::min_element(list.begin(), list.end(), [&](const Standing& a, const Standing& b) {
-      return t.measure(a) < t.measure(b);
-    });
+    const auto best = std::min_element(
+        list.begin(), list.end(), [&](const Standing& a, const Standing& b) { return t.measure(a) < t.measure(b); });
     if (best != list.end()) titles[best - list.begin()].push_back(t.name);
   }
   return titles;

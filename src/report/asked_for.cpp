@@ -106,7 +106,8 @@ std::string window_text(const Requirement& requirement, const FigureInfo& figure
   return "";
 }
 
-void add_asked_for(TextSheet& sheet, const Spec& spec) {
+void add_asked_for(TextSheet& sheet, const DesignResult& result) {
+  const Spec& spec = result.spec;
   sheet.heading("Asked for");
   add_requirements(sheet, spec);
   sheet.heading("Under these conditions");
@@ -116,11 +117,13 @@ void add_asked_for(TextSheet& sheet, const Spec& spec) {
   lines.add("load", load_text(spec.load));
   lines.add("wiring", stray_text(spec.stray));
   lines.add("ambient", condition_text(spec.ambient, Dimension::temperature));
-  lines.add("resistors", rules_text(spec.parts.resistors, Dimension::resistance));
-  lines.add("capacitors", rules_text(spec.parts.capacitors, Dimension::capacitance));
-  add_role_rules(lines, spec.parts);
-  lines.add("transistors", spec.devices.empty() ? "every fitting type of the catalogue" : join(spec.devices, ", "));
-  lines.add("search", fmt::format("up to {} candidates, seed {}", spec.candidates, spec.seed));
+  if (result.searched) {
+    lines.add("resistors", rules_text(spec.parts.resistors, Dimension::resistance));
+    lines.add("capacitors", rules_text(spec.parts.capacitors, Dimension::capacitance));
+    add_role_rules(lines, spec.parts);
+    lines.add("transistors", spec.devices.empty() ? "every fitting type of the catalogue" : join(spec.devices, ", "));
+    lines.add("search", fmt::format("up to {} candidates, seed {}", spec.candidates, spec.seed));
+  }
   sheet.grid(lines.grid);
   for (const std::string& note : spec.notes) sheet.item(note);
 }

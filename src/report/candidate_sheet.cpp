@@ -16,6 +16,9 @@ constexpr double kNarrowBand = 30;
 // Smaller shares of a cutoff are not listed one by one.
 constexpr double kSmallestShare = 0.005;
 
+// A note that more figures share is printed with their number.
+constexpr std::size_t kNamedFields = 4;
+
 std::string quantity(double value, Dimension dimension) { return format_quantity(value, dimension); }
 
 // What the part must stand: a resistor's power, a capacitor's voltage.
@@ -188,22 +191,30 @@ bool is_silent(const std::string& field) {
 }
 
 void add_notes(TextSheet& sheet, const Candidate& candidate) {
-  std::map<std::string, std::string> shown = candidate.notes;
-  std::erase_if(shown, [](const auto& note) { return is_silent(note.first); });
-  if (shown.empty()) return;
+  std::map<std::string, std::vector<std::string>> fields_of;
+  for (const auto& [field, text] : candidate.notes)
+    if (!is_silent(field)) fields_of[text].push_back(field);
+  if (fields_of.empty()) return;
   sheet.heading("Notes");
-  for (const auto& [field, text] : shown) sheet.item(field + ": " + text);
+  for (const auto& [text, fields] : fields_of) {
+    const bool many = fields.size() > kNamedFields;
+    sheet.item((many ? fmt::format("{} figures", fields.size()) : join(fields, ", ")) + ": " + text);
+  }
 }
 
 }  // namespace
 
+bool is_active(const Candidate& candidate) { return candidate.analysis.point.state == BiasState::active; }
+
 void add_candidate(TextSheet& sheet, const Candidate& candidate, const Spec& spec) {
   sheet.heading(fmt::format("Candidate {}: {}, {}", candidate.rank, candidate.device, candidate.variant));
   add_parts(sheet, candidate);
-  add_figures(sheet, candidate, spec);
-  add_operating_point(sheet, candidate);
-  add_pole_model(sheet, candidate);
-  add_roots(sheet, candidate);
+  if (is_active(candidate)) {
+    add_figures(sheet, candidate, spec);
+    add_operating_point(sheet, candidate);
+    add_pole_model(sheet, candidate);
+    add_roots(sheet, candidate);
+  }
   add_notes(sheet, candidate);
 }
 

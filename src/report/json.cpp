@@ -124,7 +124,9 @@ Json time_constants(const std::vector<TimeConstant>& list, const std::string& fi
 }
 
 Json pole_model(const Candidate& candidate, Notes& notes) {
-  const PoleModel& model = candidate.poles_estimate;
+  PoleModel model = candidate.poles_estimate;
+  if (candidate.analysis.point.state != BiasState::active)
+    model = {kNotComputed, kNotComputed, kNotComputed, kNotComputed, kNotComputed, {}, {}};
   const char* reason = "no estimate at this operating point";
   Json out;
   out["midband_gain"] = notes.number(model.midband_gain, "pole_model.midband_gain", reason);

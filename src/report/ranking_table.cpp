@@ -55,10 +55,13 @@ bool any_shortfall(const DesignResult& result) {
 }  // namespace
 
 void add_ranking(TextSheet& sheet, const DesignResult& result) {
-  if (result.candidates.empty()) return;
-  sheet.heading(result.ranked_by == RankBy::error
-                    ? "Candidates by error in steps of 0.05, then by tolerance sensitivity"
-                    : "Candidates by tolerance sensitivity");
+  if (result.candidates.empty() || (!result.searched && !any_requirement(result.spec))) return;
+  if (result.candidates.size() == 1)
+    sheet.heading("The candidate");
+  else
+    sheet.heading(result.ranked_by == RankBy::error
+                      ? "Candidates by error in steps of 0.05, then by tolerance sensitivity"
+                      : "Candidates by tolerance sensitivity");
   const auto symbol = [](Figure figure) { return std::string(info(figure).symbol); };
   TextGrid grid;
   grid.columns = {{"rank", true},

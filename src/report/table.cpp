@@ -11,15 +11,14 @@ namespace bandwright {
 
 namespace {
 
-bool any_requirement(const Spec& spec) {
-  return std::any_of(spec.requirements.begin(), spec.requirements.end(), [](const auto& r) { return r.has_value(); });
-}
-
 std::string verdict_text(const DesignResult& result) {
   const std::size_t all = result.candidates.size();
   const auto meeting = std::count_if(result.candidates.begin(), result.candidates.end(),
                                      [](const Candidate& c) { return c.shortfalls.empty(); });
+  if (all == 0 && result.interrupted) return "No candidate had been found yet.";
   if (all == 0) return "No candidate: no stage meets even the conditions of a working operating point.";
+  if (all == 1 && !is_active(result.candidates.front()))
+    return "The stage does not work as an amplifier: see its notes.";
   if (!any_requirement(result.spec)) return "Recomputed; no requirement was stated.";
   if (meeting == 0)
     return all == 1 ? "The candidate does not meet every requirement."
@@ -31,7 +30,8 @@ std::string verdict_text(const DesignResult& result) {
 void add_verdict(TextSheet& sheet, const DesignResult& result) {
   if (result.interrupted)
     sheet.verdict("INTERRUPTED: the search was stopped early; this is the best it had found.", false);
-  sheet.verdict(verdict_text(result), result.met && !result.interrupted);
+  const bool works = !result.candidates.empty() && is_active(result.candidates.front());
+  sheet.verdict(verdict_text(result), result.met && works && !result.interrupted);
   if (!result.spec.title.empty()) sheet.paragraph(result.spec.title);
 }
 
@@ -44,10 +44,9 @@ void add_list(TextSheet& sheet, const std::string& heading, const std::vector<st
 void add_cautions(TextSheet& sheet) {
   sheet.heading("Before building");
   sheet.line(
-      "At most 60 V DC between any two nodes, from a battery or a certified isolated supply; mind polarity and rating; "
-      "eye protection at first power-up; discharge before touching; parts may be hot. A paper design: build and "
-      "measure; "
-      "not for medical or safety use; local codes come first. In full: README.md, Cautions.");
+      "At most 60 V DC between any two nodes, battery or certified isolated supply; mind polarity and rating; eye "
+      "protection at first power-up; discharge before touching; hot parts. A paper design: build and measure; not for "
+      "medical or safety use; local codes first. In full: README.md, Cautions.");
 }
 
 // How to see what the sheet leaves out.
@@ -60,11 +59,15 @@ std::string closing_text(const DesignResult& result) {
 
 }  // namespace
 
+bool any_requirement(const Spec& spec) {
+  return std::any_of(spec.requirements.begin(), spec.requirements.end(), [](const auto& r) { return r.has_value(); });
+}
+
 std::string write_table(const DesignResult& result, const TableStyle& style) {
   TextSheet sheet(style);
   add_verdict(sheet, result);
   if (!result.met) add_list(sheet, "Why", result.explanations);
-  add_asked_for(sheet, result.spec);
+  add_asked_for(sheet, result);
   add_ranking(sheet, result);
   if (!result.candidates.empty()) add_candidate(sheet, result.candidates.front(), result.spec);
   add_list(sheet, "Definitions in force", result.definitions);

@@ -2,12 +2,11 @@
 #pragma once
 
 #include <array>
-#include <cstdint>
-#include <vector>
-
 #include <bandwright/catalogue.hpp>
 #include <bandwright/device.hpp>
 #include <bandwright/stage.hpp>
+#include <cstdint>
+#include <vector>
 
 namespace bandwright {
 

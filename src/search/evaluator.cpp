@@ -1,10 +1,9 @@
 #include "search/evaluator.hpp"
 
 #include <algorithm>
-#include <cmath>
-
 #include <bandwright/margins.hpp>
 #include <bandwright/search.hpp>
+#include <cmath>
 
 #include "analysis/operating_point.hpp"
 

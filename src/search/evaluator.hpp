@@ -1,14 +1,13 @@
-// Evaluates grid points of one design space against a spec. Remembers what it has seen, and keeps operating points while
-// only capacitors change.
+// Evaluates grid points of one design space against a spec. Remembers what it has seen, and keeps operating points
+// while only capacitors change.
 #pragma once
-
-#include <cstdint>
-#include <unordered_map>
 
 #include <bandwright/analysis.hpp>
 #include <bandwright/assessment.hpp>
 #include <bandwright/ranking.hpp>
 #include <bandwright/spec.hpp>
+#include <cstdint>
+#include <unordered_map>
 
 #include "analysis/bias_reuse.hpp"
 #include "search/design_space.hpp"

@@ -9,11 +9,11 @@ namespace bandwright {
 namespace {
 
 constexpr int kSteps[] = {-1, 1, -2, 2};
-constexpr int kLargestKick = 2;      // values a kicked part moves at most
-constexpr int kFewestKicked = 2;     // parts in one kick
+constexpr int kLargestKick = 2;   // values a kicked part moves at most
+constexpr int kFewestKicked = 2;  // parts in one kick
 constexpr int kMostKicked = 4;
-constexpr int kPatience = 10;        // kicks without a gain before another optimum is taken up
-constexpr std::size_t kTakenUp = 12;  // of the best optima, to go on from
+constexpr int kPatience = 10;                    // kicks without a gain before another optimum is taken up
+constexpr std::size_t kTakenUp = 12;             // of the best optima, to go on from
 constexpr std::size_t kEvaluationsPerKick = 40;  // at least: a small space is known whole before its budget is spent
 
 std::vector<std::int8_t> free_roles(const DesignSpace& space) {
@@ -35,9 +35,10 @@ bool improves(Evaluator& evaluator, const GridPoint& p, const Ranked& current, R
   return a != b ? a < b : comes_before(evaluator.key(p), current.key, by);
 }
 
-GridPoint kicked(const DesignSpace& space, const std::vector<std::int8_t>& roles_free, GridPoint p, RandomStream& random) {
-  const int parts = std::min<int>(kFewestKicked + random.below(kMostKicked - kFewestKicked + 1),
-                                  static_cast<int>(roles_free.size()));
+GridPoint kicked(const DesignSpace& space, const std::vector<std::int8_t>& roles_free, GridPoint p,
+                 RandomStream& random) {
+  const int parts =
+      std::min<int>(kFewestKicked + random.below(kMostKicked - kFewestKicked + 1), static_cast<int>(roles_free.size()));
   for (int i = 0; i < parts; ++i) {
     const int role = roles_free[random.below(static_cast<int>(roles_free.size()))];
     const int by = (1 + random.below(kLargestKick)) * (random.below(2) == 0 ? 1 : -1);

@@ -1,13 +1,11 @@
 #include "search/relaxation.hpp"
 
 #include <algorithm>
-#include <cmath>
-
-#include <nlopt.hpp>
-
 #include <bandwright/analysis.hpp>
 #include <bandwright/margins.hpp>
 #include <bandwright/search.hpp>
+#include <cmath>
+#include <nlopt.hpp>
 
 #include "analysis/operating_point.hpp"
 #include "search/evaluator.hpp"
@@ -126,11 +124,9 @@ PartValues Problem::run(const PartValues& start, ResponseModel model, int steps)
   nlopt::opt optimiser(nlopt::LD_SLSQP, static_cast<unsigned>(x.size()));
   optimiser.set_lower_bounds(low);
   optimiser.set_upper_bounds(high);
-  optimiser.set_min_objective(
-      [](const std::vector<double>& p, std::vector<double>& g, void* self) {
-        return static_cast<Problem*>(self)->objective(p, g);
-      },
-      this);
+  optimiser.set_min_objective([](const std::vector<double>& p, std::vector<double>& g,
+                                 void* self) { return static_cast<Problem*>(self)->objective(p, g); },
+                              this);
   for (Side& side : sides) {
     optimiser.add_inequality_constraint(
         [](const std::vector<double>& p, std::vector<double>& g, void* data) {
@@ -163,8 +159,8 @@ Relaxed relax(const Spec& spec, const DesignSpace& space, const PartValues& star
   r.error = search_error(spec, a, r.values, *stage.device);
   if (r.error < kWorstError) {
     const Sensitivity slopes = sensitivity(stage, a, gain_definition(spec));
-    r.tolerance_sensitivity = tolerance_sensitivity(
-        spec, slopes, cause_widths(space, snap(space, r.values), a.point.collector_current));
+    r.tolerance_sensitivity =
+        tolerance_sensitivity(spec, slopes, cause_widths(space, snap(space, r.values), a.point.collector_current));
   }
   return r;
 }

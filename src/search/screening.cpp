@@ -1,6 +1,5 @@
-#include <bandwright/search.hpp>
-
 #include <algorithm>
+#include <bandwright/search.hpp>
 #include <cmath>
 #include <optional>
 
@@ -24,15 +23,16 @@ double lower_limit(const Spec& spec, Figure f) {
   return r ? r->lower : kNotComputed;
 }
 
-/// gm R_ac with the largest drop the supply leaves to the collector resistor, ro in parallel: A <= V/VT with 1/V = 1/(VCC
+/// gm R_ac with the largest drop the supply leaves to the collector resistor, ro in parallel: A <= V/VT with 1/V =
+/// 1/(VCC
 /// - 1 V) + 1/VA. Degeneration, load and source only lower it.
 double gain_ceiling(const Spec& spec, double inverse_early_voltage) {
   const double drop = spec.supply_magnitude() - kLeastCollectorEmitter;
   return drop > 0 ? drop / (1 + drop * inverse_early_voltage) / thermal_voltage(spec) : 0;
 }
 
-/// The input pole by the Miller effect: (RS + rbb') Cmu A is part of the time constant whatever the rest does, Cmu at the
-/// largest VCB. Two poles that come together put fH up to 1.29 times over 1/(2 pi tau): kTogether is left for them.
+/// The input pole by the Miller effect: (RS + rbb') Cmu A is part of the time constant whatever the rest does, Cmu at
+/// the largest VCB. Two poles that come together put fH up to 1.29 times over 1/(2 pi tau): kTogether is left for them.
 double miller_ceiling(const Spec& spec, const BipolarParameters& d, double gain) {
   const double v_cb = spec.supply_magnitude();
   const double c_mu = d.feedback_capacitance * e_to(-d.grading_exponent * ln(1 + v_cb / d.built_in_potential));
@@ -50,8 +50,8 @@ std::optional<std::string> ceiling_reason(const Spec& spec, const BipolarParamet
     return "gain cannot exceed V/VT = " + text(most, Dimension::gain) + " with 1/V = 1/(VCC - 1 V) + 1/VA";
   }
   if (d.highest_transition_frequency > 0 && fast > d.highest_transition_frequency) {
-    return "fT " + text(d.highest_transition_frequency, Dimension::frequency) + " is under the lowest upper cutoff allowed, " +
-           text(fast, Dimension::frequency);
+    return "fT " + text(d.highest_transition_frequency, Dimension::frequency) +
+           " is under the lowest upper cutoff allowed, " + text(fast, Dimension::frequency);
   }
   if (const double most = miller_ceiling(spec, d, gain); fast > most) {
     return "upper cutoff cannot exceed " + text(most, Dimension::frequency) +
@@ -88,8 +88,9 @@ std::vector<std::string> explain_limits(const Spec& spec, const std::vector<Deri
   for (const DerivedDevice& d : devices) fastest = std::max(fastest, miller_ceiling(spec, d.parameters, gain));
   if (!devices.empty() && lower_limit(spec, Figure::upper_cutoff) > fastest) {
     reasons.push_back("upper cutoff: the Miller effect of Cmu on the source's resistance and rbb' allows at most " +
-                      text(fastest, Dimension::frequency) + " at a gain of " + text(gain, Dimension::gain) + "; at least " +
-                      text(lower_limit(spec, Figure::upper_cutoff), Dimension::frequency) + " is required");
+                      text(fastest, Dimension::frequency) + " at a gain of " + text(gain, Dimension::gain) +
+                      "; at least " + text(lower_limit(spec, Figure::upper_cutoff), Dimension::frequency) +
+                      " is required");
   }
   const auto& low = spec.requirement(Figure::lower_cutoff);
   const auto& high = spec.requirement(Figure::upper_cutoff);

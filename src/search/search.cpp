@@ -1,15 +1,13 @@
-#include <bandwright/search.hpp>
-
-#include <algorithm>
-#include <atomic>
-#include <memory>
-#include <mutex>
-
 #include <tbb/info.h>
 #include <tbb/parallel_for.h>
 #include <tbb/task_arena.h>
 
+#include <algorithm>
+#include <atomic>
 #include <bandwright/margins.hpp>
+#include <bandwright/search.hpp>
+#include <memory>
+#include <mutex>
 
 #include "search/refinement.hpp"
 #include "search/relaxation.hpp"
@@ -19,20 +17,21 @@ namespace bandwright {
 
 namespace {
 
-constexpr std::size_t kRelaxations = 384;       // over all spaces together
-constexpr std::size_t kLeastStarts = 3;         // in each space
+constexpr std::size_t kRelaxations = 384;  // over all spaces together
+constexpr std::size_t kLeastStarts = 3;    // in each space
 constexpr std::size_t kMostStarts = 64;
-constexpr std::size_t kRefinements = 96;        // relaxed points refined, over all spaces
-constexpr std::size_t kStartsInSpace = 2;       // refined in one space at least
+constexpr std::size_t kRefinements = 96;   // relaxed points refined, over all spaces
+constexpr std::size_t kStartsInSpace = 2;  // refined in one space at least
 constexpr std::size_t kRefinedSpaces = 30;
-constexpr std::size_t kKickedSpaces = 8;        // of the most promising, searched on by kicks
-constexpr std::size_t kKickBudget = 400000;     // analyses, over all of them
-constexpr std::size_t kKeptOptima = 24;         // of one space
+constexpr std::size_t kKickedSpaces = 8;     // of the most promising, searched on by kicks
+constexpr std::size_t kKickBudget = 400000;  // analyses, over all of them
+constexpr std::size_t kKeptOptima = 24;      // of one space
 
 /// Runs tasks on TBB's threads, each writing its own slot, so that the answer does not depend on their number.
 class Workers {
 public:
-  Workers(const SearchOptions& options, double first_share, double last_share, std::size_t tasks, std::atomic<bool>& stop)
+  Workers(const SearchOptions& options, double first_share, double last_share, std::size_t tasks,
+          std::atomic<bool>& stop)
       : options_(options), first_(first_share), span_(last_share - first_share), tasks_(tasks), stop_(stop) {}
 
   template <class Task>
@@ -40,11 +39,14 @@ public:
     const int most = tbb::info::default_concurrency();
     tbb::task_arena arena(options_.threads > 0 ? std::min(options_.threads, most) : most);
     arena.execute([&] {
-      tbb::parallel_for(std::size_t(0), tasks_, [&](std::size_t i) {
-        if (stopped()) return;
-        task(i);
-        ++done_;
-      }, tbb::simple_partitioner());
+      tbb::parallel_for(
+          std::size_t(0), tasks_,
+          [&](std::size_t i) {
+            if (stopped()) return;
+            task(i);
+            ++done_;
+          },
+          tbb::simple_partitioner());
     });
   }
 
@@ -53,7 +55,8 @@ public:
     if (stop_) return true;
     std::unique_lock<std::mutex> one(ask_, std::try_to_lock);
     if (one.owns_lock() && options_.keep_going) {
-      const double share = first_ + span_ * static_cast<double>(done_) / static_cast<double>(std::max<std::size_t>(tasks_, 1));
+      const double share =
+          first_ + span_ * static_cast<double>(done_) / static_cast<double>(std::max<std::size_t>(tasks_, 1));
       if (!options_.keep_going(share)) stop_ = true;
     }
     return stop_;
@@ -176,7 +179,8 @@ std::string describe_miss(const Found& f, const DesignSpaces& all, const Spec& s
     const Analysis a = analyse(stage, gain_definition(spec));
     const double drop = a.point.collector_current * v[index(Role::collector)];
     return "no combination of the offered values is active with VCE of at least 1 V and IC RC of at least 0.5 V within "
-           "the transistor's limits; the nearest (" + f.standing.device + ") has VCE " +
+           "the transistor's limits; the nearest (" +
+           f.standing.device + ") has VCE " +
            format_quantity(a.point.collector_emitter_voltage, Dimension::voltage, 3) + ", IC RC " +
            format_quantity(drop, Dimension::voltage, 3) + ", IC " +
            format_quantity(a.point.collector_current, Dimension::current, 3);
@@ -203,7 +207,8 @@ SearchOutcome search(const Spec& spec, const Catalogue& catalogue, const std::ve
     return comes_before(a.standing, b.standing, options.rank_by);
   });
   if (found.empty() || !found.front().allowed) {
-    outcome.nearest_miss = found.empty() ? "no combination of values is offered" : describe_miss(found.front(), all, spec);
+    outcome.nearest_miss =
+        found.empty() ? "no combination of values is offered" : describe_miss(found.front(), all, spec);
     return outcome;
   }
   std::erase_if(found, [](const Found& f) { return !f.allowed; });

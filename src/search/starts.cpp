@@ -1,11 +1,9 @@
 #include "search/starts.hpp"
 
 #include <algorithm>
-#include <cmath>
-
-#include <boost/random/sobol.hpp>
-
 #include <bandwright/search.hpp>
+#include <boost/random/sobol.hpp>
+#include <cmath>
 
 #include "numeric/random.hpp"
 #include "stage/first_estimates.hpp"
@@ -16,7 +14,7 @@ namespace {
 
 constexpr double kLowestCurrent = 20e-6, kHighestCurrent = 30e-3;  // A, where starts are sought
 constexpr double kOpenLoad = 50e3;                                 // ohm: collector resistors without a load to compare
-constexpr double kShareSpread = 3.0;                                // ln of the largest ratio between weights of corners
+constexpr double kShareSpread = 3.0;                               // ln of the largest ratio between weights of corners
 
 /// Between a and b, evenly in the logarithm.
 double spread(double a, double b, double u) { return b > a ? a * e_to(u * ln(b / a)) : a; }
@@ -43,8 +41,8 @@ WantedBias wanted_bias(const Spec& spec, const DesignSpace& space, const Choices
   const double f_high = aim(spec, Figure::upper_cutoff);
   const double c_out = spec.load.capacitance + spec.stray.output + device.feedback_capacitance;
   if (f_high > 0 && c_out > 0) high = std::min(high, 1 / (2 * kPi * f_high * c_out));
-  const double most = std::min({device.current_limit / 2, kHighestCurrent,
-                                device.power_limit / 2 / std::max(left - w.collector_drop, 0.5)});
+  const double most = std::min(
+      {device.current_limit / 2, kHighestCurrent, device.power_limit / 2 / std::max(left - w.collector_drop, 0.5)});
   double highest_current = most;
   for (Figure f : {Figure::supply_current, Figure::collector_current}) {
     const double limit = aim(spec, f);
@@ -73,7 +71,8 @@ BiasResistors bias_resistors(const BipolarParameters& device, const WantedBias& 
 }
 
 std::array<double, 3> shares_of_cutoff(bool bypassed, double a, double b) {
-  std::array<double, 3> s = {e_to(a * kShareSpread), e_to(b * kShareSpread), bypassed ? e_to((1 - 0.5 * (a + b)) * kShareSpread) : 0};
+  std::array<double, 3> s = {e_to(a * kShareSpread), e_to(b * kShareSpread),
+                             bypassed ? e_to((1 - 0.5 * (a + b)) * kShareSpread) : 0};
   const double sum = s[0] + s[1] + s[2];
   for (double& x : s) x /= sum;
   return s;

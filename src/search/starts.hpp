@@ -1,11 +1,10 @@
-// Starting points of the relaxation: textbook designs whose free choices (voltages, current, spread, shares of the lower
-// cutoff) come from a Sobol sequence.
+// Starting points of the relaxation: textbook designs whose free choices (voltages, current, spread, shares of the
+// lower cutoff) come from a Sobol sequence.
 #pragma once
 
 #include <array>
-#include <vector>
-
 #include <bandwright/spec.hpp>
+#include <vector>
 
 #include "search/design_space.hpp"
 

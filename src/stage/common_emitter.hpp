@@ -10,7 +10,6 @@
 #pragma once
 
 #include <array>
-
 #include <bandwright/stage.hpp>
 
 #include "device/bipolar.hpp"
@@ -50,10 +49,10 @@ Circuit<T> circuit_of(const Stage& stage) {
 template <class T>
 struct BiasTrial {
   T i_c, i_b, v_be, v_ce, v_e;
-  T gain;      ///< beta0, multiplier and temperature included
+  T gain;         ///< beta0, multiplier and temperature included
   T log_gain_25;  ///< ln of the nominal beta0 at 25 °C
-  T residual;  ///< Vth - IB Rth - VBE - IE RE, volt; 0 at the operating point
-  T slope;     ///< d residual / d ln IC, exact, always negative where beta0 rises slower than IC
+  T residual;     ///< Vth - IB Rth - VBE - IE RE, volt; 0 at the operating point
+  T slope;        ///< d residual / d ln IC, exact, always negative where beta0 rises slower than IC
 };
 
 /// Vth = IB Rth + VBE + IE RE with IF (1 + VCE/VA) = IC, IB = IF/beta0 - ICBO (1 + 1/beta0), VCE = VCC - IC RC - IE RE.
@@ -100,8 +99,8 @@ struct Transfer {
   Polynomial<T, 7> denominator;
 };
 
-/// Every coefficient of D is a sum of positive products: rows combined by Kirchhoff's current law, branches that may be 0
-/// entered as impedances. The one subtraction in N is the physical zero of Cmu against gm.
+/// Every coefficient of D is a sum of positive products: rows combined by Kirchhoff's current law, branches that may be
+/// 0 entered as impedances. The one subtraction in N is the physical zero of Cmu against gm.
 ///
 /// Symbols: emitter impedance DE/NE, load branch admittance NL/DL, source branch folded into Y0/D1, Y = gpi + s Cpi,
 /// S = Y + gm + go, m = s Cmu.
@@ -142,11 +141,11 @@ Transfer<T> transfer(const Circuit<T>& c, const HybridPi<T>& h) {
   const auto b = times_s(c_mu, forward) + y * q;
 
   Transfer<T> h_s;
-  h_s.denominator = y0 * n + k * b +
-                    times_s(c.stray_feedback, y0 * d_l * bridge + d1 * (r_bb * b + forward + y * (d_l * n_e)));
-  h_s.numerator = c_in * c_out *
-                  (d_e * (g_o * y + times_s(c_mu, s)) + times_s(c_mu, n_e) + T(-g_m) * n_e +
-                   times_s(c.stray_feedback, bridge));
+  h_s.denominator =
+      y0 * n + k * b + times_s(c.stray_feedback, y0 * d_l * bridge + d1 * (r_bb * b + forward + y * (d_l * n_e)));
+  h_s.numerator =
+      c_in * c_out *
+      (d_e * (g_o * y + times_s(c_mu, s)) + times_s(c_mu, n_e) + T(-g_m) * n_e + times_s(c.stray_feedback, bridge));
   return h_s;
 }
 

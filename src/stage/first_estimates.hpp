@@ -2,8 +2,8 @@
 // They start the search; the exact response decides.
 //
 // Sources: four-resistor bias by divider current, Sedra & Smith, Microelectronic Circuits; bias by stability factor,
-// Millman & Halkias, Integrated Electronics, ch. 9; capacitors by short-circuit time constants with a share of the cutoff
-// each, Sedra & Smith (all read through transcriptions, books not opened).
+// Millman & Halkias, Integrated Electronics, ch. 9; capacitors by short-circuit time constants with a share of the
+// cutoff each, Sedra & Smith (all read through transcriptions, books not opened).
 #pragma once
 
 #include <array>
@@ -50,7 +50,8 @@ std::array<double, 3> low_side_capacitors(const std::array<SeenBy<double>, 3>& s
 /// slower already.
 double shunt_capacitor(const PoleEstimate<double>& without_shunt, double upper_cutoff);
 
-/// The unbypassed emitter resistor (0..total) that brings the midband gain to the wanted one; 0 where even that is too low.
+/// The unbypassed emitter resistor (0..total) that brings the midband gain to the wanted one; 0 where even that is too
+/// low.
 double unbypassed_resistor(Circuit<double> circuit, const HybridPi<double>& h, double gain, double total);
 
 }  // namespace bandwright

@@ -1,7 +1,7 @@
 // The resistive networks behind the textbook figures, for every kind of number.
 //
-// Midband: Cin, Cout, CE short, every other capacitor open. ro is kept. With GC = 1/RC + 1/RL, RE the emitter resistance
-// that is not bypassed, Dc = GC + go + go RE GC:
+// Midband: Cin, Cout, CE short, every other capacitor open. ro is kept. With GC = 1/RC + 1/RL, RE the emitter
+// resistance that is not bypassed, Dc = GC + go + go RE GC:
 //   v_c = -i_b (beta - go RE)/Dc,   resistance into the base rbb' + rpi + RE (go + (1 + beta) GC)/Dc.
 // Derived from Kirchhoff's current law at base, emitter and collector; with go = 0 these are the published forms
 // (Gray, Hurst, Lewis, Meyer, Analysis and Design of Analog Integrated Circuits).
@@ -26,7 +26,7 @@ struct Midband {
   T r_base;     ///< into the base terminal
   T r_in;       ///< R1||R2||r_base: the input resistance
   T r_bb;
-  T transfer;   ///< -v_c/i_b, ohm
+  T transfer;  ///< -v_c/i_b, ohm
 };
 
 /// `bypassed`: the bypass capacitor is there and shorts RE2.

@@ -22,8 +22,8 @@ struct SeenBy {
 template <class T>
 struct PoleEstimate {
   T gain;
-  T lower;  ///< Hz, sum of the corner frequencies
-  T upper;  ///< Hz, 1/(2 pi sum of time constants)
+  T lower;                       ///< Hz, sum of the corner frequencies
+  T upper;                       ///< Hz, 1/(2 pi sum of time constants)
   std::array<SeenBy<T>, 3> low;  ///< input coupling, output coupling, bypass
   std::array<SeenBy<T>, kHighCapacitors> high;
 };

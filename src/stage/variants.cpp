@@ -1,6 +1,5 @@
-#include <bandwright/stage.hpp>
-
 #include <algorithm>
+#include <bandwright/stage.hpp>
 
 namespace bandwright {
 

@@ -1,10 +1,9 @@
 // Times of one evaluation and its parts, and of a whole design. Figures belong to the machine they were taken on.
 #include <benchmark/benchmark.h>
 
+#include <bandwright/design.hpp>
 #include <fstream>
 #include <sstream>
-
-#include <bandwright/design.hpp>
 
 #include "analysis/operating_point.hpp"
 #include "analysis/response.hpp"
@@ -64,7 +63,8 @@ void scan_gain_and_cutoffs(benchmark::State& state) {
   const BiasTrial<double>& t = b.solution.trial;
   const HybridPi<double> h = hybrid_pi(b.device, t.i_c, t.v_be, t.v_ce, t.gain);
   std::size_t i = 0;
-  for (auto _ : state) benchmark::DoNotOptimize(find_crossings(transfer(circuit_of<double>(varied(s, i++)), h), 0).upper);
+  for (auto _ : state)
+    benchmark::DoNotOptimize(find_crossings(transfer(circuit_of<double>(varied(s, i++)), h), 0).upper);
 }
 BENCHMARK(scan_gain_and_cutoffs);
 

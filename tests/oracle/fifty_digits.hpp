@@ -1,4 +1,4 @@
-// The same network stamped and solved in fifty decimal digits: the judge where long double and the library part.
+// The same network stamped and solved in fifty decimal digits: the judge of the long double solve, and of limits.
 #pragma once
 
 #include "network.hpp"

@@ -1,9 +1,8 @@
-// What a design must be, on every example: exact, a local optimum of its order, made of offered values, rated, the same on
-// any number of threads, and recomputable from its own result document.
+// What a design must be, on every example: exact, a local optimum of its order, made of offered values, rated, the same
+// on any number of threads, and recomputable from its own result document.
 #include <bandwright/design.hpp>
 #include <bandwright/report.hpp>
 #include <bandwright/search.hpp>
-
 #include <cmath>
 #include <filesystem>
 #include <fstream>
@@ -49,8 +48,7 @@ GridPoint grid_point(const DesignSpace& space, const Candidate& c) {
 }
 
 void check_local_optimum(const Spec& spec, const Candidate& c) {
-  const std::vector<DerivedDevice> devices = {
-      derive_parameters(*built_in_catalogue().find_transistor(c.device))};
+  const std::vector<DerivedDevice> devices = {derive_parameters(*built_in_catalogue().find_transistor(c.device))};
   const DesignSpaces all = design_spaces(spec, built_in_catalogue(), devices);
   for (const DesignSpace& space : all.spaces) {
     if (c.variant != space.variant->key) continue;

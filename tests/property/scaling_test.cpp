@@ -1,12 +1,11 @@
 // Laws of linear networks that hold whatever the numbers are.
 #include <bandwright/analysis.hpp>
-
 #include <cmath>
 #include <random>
 
+#include "analysis/response.hpp"
 #include "catch.hpp"
 #include "stage/common_emitter.hpp"
-#include "analysis/response.hpp"
 
 using namespace bandwright;
 
@@ -26,7 +25,7 @@ Network random_network(std::mt19937_64& random) {
   };
   Network n;
   Circuit<double>& c = n.circuit;
-  c.part = {pick(1e3, 1e6), pick(1e3, 1e6), pick(100, 1e5), pick(1, 1e3), pick(10, 1e4),
+  c.part = {pick(1e3, 1e6),   pick(1e3, 1e6),   pick(100, 1e5),   pick(1, 1e3),     pick(10, 1e4),
             pick(1e-8, 1e-4), pick(1e-8, 1e-4), pick(1e-7, 1e-3), pick(1e-12, 1e-8)};
   c.supply = 12;
   c.source_resistance = pick(1, 1e5);
@@ -63,7 +62,8 @@ Crossings band(const Network& n) { return find_crossings(transfer(n.circuit, n.d
 
 }  // namespace
 
-TEST_CASE("scaling all impedances leaves gain and cutoffs; scaling all capacitors moves the cutoffs alike", "[property]") {
+TEST_CASE("scaling all impedances leaves gain and cutoffs; scaling all capacitors moves the cutoffs alike",
+          "[property]") {
   std::mt19937_64 random(21);
   for (int i = 0; i < 500; ++i) {
     const Network n = random_network(random);

@@ -1,7 +1,6 @@
-// Error, margin and shortfall of a figure against its requirement. Expected values are worked by hand from the definitions
-// in <bandwright/margins.hpp>.
+// Error, margin and shortfall of a figure against its requirement. Expected values are worked by hand from the
+// definitions in <bandwright/margins.hpp>.
 #include <bandwright/margins.hpp>
-
 #include <cmath>
 
 #include "catch.hpp"
@@ -73,8 +72,8 @@ TEST_CASE("the deviation has the error's size inside its window and an exact slo
     const Deviation d = deviation(r, gain(), x);
     CHECK(std::fabs(d.value) == Approx(requirement_error(r, gain(), x)));
     const double h = 1e-6;
-    const double numeric =
-        (deviation(r, gain(), x * (1 + h)).value - deviation(r, gain(), x * (1 - h)).value) / std::log((1 + h) / (1 - h));
+    const double numeric = (deviation(r, gain(), x * (1 + h)).value - deviation(r, gain(), x * (1 - h)).value) /
+                           std::log((1 + h) / (1 - h));
     CHECK(d.slope == Approx(numeric).epsilon(1e-6));
   }
 }

@@ -1,4 +1,5 @@
-// Numbers: ln and exp against the library's long double, lanes against double byte for byte, duals against closed forms.
+// Numbers: ln and exp against the library's long double, lanes against double byte for byte, duals against closed
+// forms.
 #include <bit>
 #include <cmath>
 #include <random>
@@ -42,7 +43,9 @@ TEST_CASE("lanes hold the same bytes as double", "[numeric]") {
     for (std::size_t k = 0; k < N; ++k) x.set(k, any(random)), y.set(k, any(random));
     const Pack<N> e = e_to(x), l = ln(e), r = square_root(e), m = larger(x, y), q = (x * y - x) / (y + Pack<N>(400.0));
     for (std::size_t k = 0; k < N; ++k) {
-      const auto same = [](double a, double b) { return std::bit_cast<std::uint64_t>(a) == std::bit_cast<std::uint64_t>(b); };
+      const auto same = [](double a, double b) {
+        return std::bit_cast<std::uint64_t>(a) == std::bit_cast<std::uint64_t>(b);
+      };
       REQUIRE(same(e[k], e_to(x[k])));
       REQUIRE(same(l[k], ln(e_to(x[k]))));
       REQUIRE(same(r[k], std::sqrt(e_to(x[k]))));
@@ -57,17 +60,17 @@ TEST_CASE("dual numbers carry the derivatives of closed forms", "[numeric]") {
   for (double x : {0.3, 1.7, 42.0}) {
     const D v(x, 1.0);
     const D f = v * v * v / (D(1.0) + v) - square_root(v) * ln(v) + e_to(-v);
-    const double truth = (3 * x * x * (1 + x) - x * x * x) / ((1 + x) * (1 + x)) -
-                         (std::log(x) / 2 + 1) / std::sqrt(x) - std::exp(-x);
+    const double truth =
+        (3 * x * x * (1 + x) - x * x * x) / ((1 + x) * (1 + x)) - (std::log(x) / 2 + 1) / std::sqrt(x) - std::exp(-x);
     CHECK(f.slope == Approx(truth).epsilon(1e-13));
     CHECK(larger(v, D(1.0)).slope == (x > 1 ? 1.0 : 0.0));
   }
 }
 
 TEST_CASE("polynomials multiply and add as on paper", "[numeric]") {
-  const Polynomial<double, 1> a{{2, 3}};          // 2 + 3 s
-  const Polynomial<double, 2> b{{1, 0, 4}};       // 1 + 4 s^2
-  const Polynomial<double, 3> p = a * b;          // 2 + 3 s + 8 s^2 + 12 s^3
+  const Polynomial<double, 1> a{{2, 3}};     // 2 + 3 s
+  const Polynomial<double, 2> b{{1, 0, 4}};  // 1 + 4 s^2
+  const Polynomial<double, 3> p = a * b;     // 2 + 3 s + 8 s^2 + 12 s^3
   CHECK(p.c == std::array<double, 4>{2, 3, 8, 12});
   CHECK((a + b).c == std::array<double, 3>{3, 3, 4});
   CHECK(times_s(5.0, a).c == std::array<double, 3>{0, 10, 15});

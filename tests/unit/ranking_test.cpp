@@ -1,7 +1,6 @@
 // The order of candidates, alternatives that differ, titles. Expected values are worked by hand.
-#include <bandwright/ranking.hpp>
-
 #include <algorithm>
+#include <bandwright/ranking.hpp>
 #include <limits>
 
 #include "catch.hpp"
@@ -99,7 +98,9 @@ TEST_CASE("equal values count once in a kind", "[ranking]") {
 TEST_CASE("titles go to the best of the list", "[ranking]") {
   const auto titles = best_at({standing(key(0.01, 2), "A", 2e-3), standing(key(0.02, 1), "B", 1e-3)});
   REQUIRE(titles.size() == 2);
-  const auto holds = [&](std::size_t i, const char* t) { return std::find(titles[i].begin(), titles[i].end(), t) != titles[i].end(); };
+  const auto holds = [&](std::size_t i, const char* t) {
+    return std::find(titles[i].begin(), titles[i].end(), t) != titles[i].end();
+  };
   CHECK(holds(0, "most exact"));
   CHECK(holds(1, "least sensitive"));
   CHECK(holds(1, "lowest current"));

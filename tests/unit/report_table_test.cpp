@@ -42,6 +42,8 @@ TEST_CASE("an interrupted search says so before all else") {
   DesignResult result = test::sample_result();
   result.interrupted = true;
   CHECK_THAT(write_table(result), StartsWith("INTERRUPTED"));
+  result.candidates.clear();
+  CHECK_THAT(write_table(result), ContainsSubstring("No candidate had been found yet."));
 }
 
 TEST_CASE("an empty list gives its reason and still the cautions") {
@@ -78,8 +80,8 @@ TEST_CASE("each shortfall is named with its rank") {
 
 TEST_CASE("the parts list shows what is needed to buy and fit each part") {
   const std::string text = write_table(test::sample_result(), {false, 200});
-  for (const char* piece : {"R1", "upper divider", "47 kΩ", "47K", "E6", "±10 %", "-20/+50 %", "metal film resistor",
-                            "0.25 W", "63 V", "+ to collector", "TO-92", "C-B-E (1-2-3)"})
+  for (const char* piece : {"R1", "upper divider", "47 kΩ", "47K", "E6", "±10 %", "-20/+50 %", "metal film", "250 mW",
+                            "63 V", "+ to collector", "TO-92", "C-B-E (1-2-3)"})
     CHECK_THAT(text, ContainsSubstring(piece));
 }
 
@@ -105,7 +107,7 @@ TEST_CASE("the sheet ends with cautions in a few lines and where the rest stands
   const auto end = std::find(heading, lines.end(), "");
   CHECK(end - heading <= 4);
   std::string text;
-  for (auto line = heading + 1; line != end; ++line) text += *line;
+  for (auto line = heading + 1; line != end; ++line) text += *line + " ";
   for (const char* piece : {"60 V DC", "battery", "isolated", "polarity", "rating", "eye protection", "discharge",
                             "hot", "measure", "medical", "local codes", "README.md"})
     CHECK_THAT(text, ContainsSubstring(piece));
@@ -140,12 +142,27 @@ TEST_CASE("a page is as wide as it is told, as far as its words allow") {
 TEST_CASE("a candidate without a value shows none, and its reason") {
   DesignResult result = test::sample_result();
   Candidate& c = result.candidates[0];
-  c.analysis.figures.fill(kNotComputed);
-  c.margins.fill(kNotComputed);
+  c.analysis.figures[index(Figure::lower_cutoff)] = kNotComputed;
   c.error = kWorstError;
-  c.notes["gain"] = "not active: VCE would be 0.1 V, needs 0.5 V";
+  c.notes["lower_cutoff"] = "no crossing on this side";
   const std::string text = write_table(result, {false, 200});
-  CHECK_THAT(text, ContainsSubstring("no value"));
-  CHECK_THAT(text, ContainsSubstring("VCE would be 0.1 V, needs 0.5 V"));
-  CHECK_THAT(text, !ContainsSubstring("nan"));
+  CHECK_THAT(text, ContainsSubstring("no value") && ContainsSubstring("lower_cutoff: no crossing on this side"));
+  CHECK_THAT(text, !ContainsSubstring(" nan"));
+}
+
+TEST_CASE("a stage that is not active shows its parts and the reason, once") {
+  DesignResult result = test::sample_result();
+  result.candidates.pop_back();
+  result.searched = false;
+  Candidate& c = result.candidates[0];
+  c.analysis.point.state = BiasState::saturated;
+  c.analysis.figures.fill(kNotComputed);
+  const std::string reason = "not active: VCE would be 0.1 V, needs 0.5 V";
+  for (const FigureInfo& figure : figures())
+    if (figure.use != FigureUse::reserved) c.notes[figure.key] = reason;
+  const std::string text = write_table(result, {false, 200});
+  CHECK_THAT(text, StartsWith("The stage does not work as an amplifier"));
+  CHECK_THAT(text, ContainsSubstring("figures: " + reason) && ContainsSubstring("+ to collector"));
+  CHECK(text.find(reason) == text.rfind(reason));
+  CHECK_THAT(text, !ContainsSubstring("Pole model") && !ContainsSubstring("seed"));
 }
