@@ -1,9 +1,9 @@
 // Analysis: operating point and exact response of a stage. Knows nothing of a spec's requirements.
 //
-// Definitions. Midband gain A: |H| at its highest peak (peaks equal within 1e-9: the lower frequency), or at a stated
-// frequency. Lower and upper cutoff: the crossings of A/sqrt(2) nearest that frequency on each side. H(s) is a ratio of
-// polynomials with nothing dropped. The junction's rise is taken once: the operating point is solved at the ambient,
-// then again at ambient + theta_JA x dissipation.
+// Definitions. Midband gain A: |H| at its highest peak (peaks equal within 1e-9: the lower frequency; the limit at
+// infinite frequency where it stands above every peak), or at a stated frequency. Lower and upper cutoff: the crossings
+// of A/sqrt(2) nearest that frequency on each side. H(s) is a ratio of polynomials with nothing dropped. The junction's
+// rise is taken once: the operating point is solved at the ambient, then again at ambient + theta_JA x dissipation.
 #pragma once
 
 #include <array>
