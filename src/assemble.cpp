@@ -6,6 +6,7 @@
 #include <set>
 
 #include "from_memory.hpp"
+#include "numeric/elementary.hpp"
 
 namespace bandwright {
 
@@ -38,7 +39,9 @@ std::vector<std::string> general_assumptions(const Spec& spec) {
       "figures are nominal: typical transistor, printed part values, supply " +
           format_quantity(spec.supply.nominal, Dimension::voltage) + ", ambient " +
           format_quantity(spec.ambient.nominal, Dimension::temperature),
-      "searched: stages with VCE of at least 1 V and IC RC of at least 0.5 V, within the transistor's limits",
+      "searched: stages with VCE of at least " + format_quantity(kLeastCollectorEmitter, Dimension::voltage) +
+          " and IC RC of at least " + format_quantity(kLeastCollectorDrop, Dimension::voltage) +
+          ", within the transistor's limits, each part with a rating that holds",
       "ratings: DC voltage at the highest supply with nominal parts; no worst case yet"};
   if (spec.ambient.nominal < 293.15)
     list.push_back("electrolytics lose 0.5 % for each kelvin below 20 °C (from memory)");
@@ -67,6 +70,14 @@ void add_notes(const Spec& spec, const Stage& stage, const GainDefinition& defin
         ": the idealised midband gain is " + format_quantity(ideal, Dimension::gain) + ", " +
         format_quantity(20 * std::log10(ideal / band.gain), Dimension::fraction, 3) +
         " dB over the gain; cutoffs are taken from the gain";
+  }
+  const GainCurve& curve = c.parameters.gain;
+  const double first = e_to(curve.log_current[0]), last = e_to(curve.log_current[curve.points - 1]);
+  const double i_c = c.analysis.point.collector_current;
+  if (c.analysis.point.state == BiasState::active && curve.points > 1 && (i_c < first || i_c > last)) {
+    c.notes["collector_current"] = "outside the currents at which hFE is published (" +
+                                   format_quantity(first, Dimension::current) + " to " +
+                                   format_quantity(last, Dimension::current) + "): hFE is taken as constant there";
   }
   for (const RoleInfo& r : roles()) {
     const auto& pin = spec.parts.pinned[index(r.role)];

@@ -1,8 +1,8 @@
 // Assessment: how much of each window the tolerances fill.
 //
 // tolerance_sensitivity = largest over the required figures of sqrt(sum (S_i t_i)^2)/w: t_i the relative tolerance of
-// part i (hFE: ln(max/min)/2; -a/+b: ln((1+b)/(1-a))/2), w the half-width of the requirement's window in ln x.
-// 1 means that the root sum of squares alone fills the window.
+// part i (hFE: ln(max/min)/2; asymmetric -a/+b: ln((1+b)/(1-a))/2), w the half-width of the requirement's window in ln
+// x. 1 means that the root sum of squares alone fills the window.
 #pragma once
 
 #include <array>

@@ -8,7 +8,7 @@
 
 namespace bandwright {
 
-double half_width(const Tolerance& t) { return ln((1 + t.above) / (1 - t.below)) / 2; }
+double half_width(const Tolerance& t) { return t.above == t.below ? t.above : ln((1 + t.above) / (1 - t.below)) / 2; }
 
 std::array<double, 2> gain_limits(const BipolarParameters& device, double collector_current) {
   const double x = ln(collector_current);
@@ -31,7 +31,8 @@ double tolerance_sensitivity(const Spec& spec, const Sensitivity& sensitivity, c
       sum += part * part;
     }
     const double share = std::sqrt(sum) / window_width(*r, f);
-    if (!(share <= largest)) largest = share;  // a NaN shows
+    if (std::isnan(share)) return share;  // a figure without a value has no sensitivity
+    largest = std::max(largest, share);
   }
   return largest;
 }

@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include <algorithm>
+#include <bandwright/figure.hpp>
 #include <boost/program_options.hpp>
 #include <charconv>
 #include <set>
@@ -48,9 +49,23 @@ std::string without_dashes(std::string text) {
   return text.substr(0, text.find('='));
 }
 
+/// The key of the reserved figure that an option speaks of, or nothing.
+std::string reserved_figure(std::string option) {
+  std::replace(option.begin(), option.end(), '-', '_');
+  for (const FigureInfo& f : figures()) {
+    const std::string key = f.key;
+    const bool speaks = option == key || option.rfind(key + "_", 0) == 0;
+    if (f.use == FigureUse::reserved && speaks) return key;
+  }
+  return "";
+}
+
 std::string unknown_option(const std::string& token, const std::vector<OptionGroup>& groups) {
   const std::string name = without_dashes(token);
   const std::string nearest = nearest_name(name, names_of(groups));
+  if (const std::string reserved = reserved_figure(name); !reserved.empty()) {
+    return fmt::format("--{}: {} is not computed by this version", printable(name), reserved);
+  }
   std::string text = fmt::format("unknown option '{}'", printable(token.substr(0, token.find('='))));
   if (!nearest.empty()) text += fmt::format("; did you mean --{}?", nearest);
   return text;

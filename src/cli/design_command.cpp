@@ -43,7 +43,6 @@ DesignOptions design_options(const Arguments& arguments) {
 
 DesignResult search(const Spec& spec, const Catalogue& catalogue, DesignOptions choice, bool quiet) {
   Progress progress("searching", quiet);
-  const InterruptWatch watch;
   choice.keep_going = [&progress](double share) {
     progress.show(share);
     return !InterruptWatch::requested();
@@ -69,10 +68,13 @@ int run_design(const Arguments& arguments) {
     tell_written(destination, arguments);
     return kMet;
   }
+  const InterruptWatch watch;
   const Catalogue catalogue = catalogue_of(arguments);
   const DesignResult result = search(spec, catalogue, choice, arguments.has("quiet"));
   tell_notes(spec, format, arguments);
-  if (result.interrupted) complain("interrupted: what follows is the best found so far");
+  if (result.interrupted)
+    complain(result.candidates.empty() ? "interrupted before a candidate was found"
+                                       : "interrupted: what follows is the best found so far");
   destination.write(formatted(result, format, destination));
   tell_written(destination, arguments);
   return status_of(result);

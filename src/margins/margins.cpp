@@ -1,6 +1,7 @@
 #include <algorithm>
 #include <bandwright/margins.hpp>
 #include <cmath>
+#include <limits>
 
 #include "numeric/elementary.hpp"
 
@@ -27,7 +28,7 @@ double margin_with_target(const Requirement& r, const FigureInfo& f, double x) {
   const bool ratio = by_ratio(f);
   const auto scale = [ratio](double v) { return ratio ? ln(v) : v; };
   const double least = ratio ? ln(1 + kLeastDistance) : kLeastDistance * std::fabs(r.target);
-  double m = 1;
+  double m = std::numeric_limits<double>::infinity();
   if (given(r.upper)) m = std::min(m, side_margin(scale(r.upper) - scale(x), scale(r.upper) - scale(r.target), least));
   if (given(r.lower)) m = std::min(m, side_margin(scale(x) - scale(r.lower), scale(r.target) - scale(r.lower), least));
   return m;
@@ -38,20 +39,6 @@ double margin_with_target(const Requirement& r, const FigureInfo& f, double x) {
 bool meets(const Requirement& r, double x) {
   if (!given(x)) return false;
   return !(given(r.lower) && x < r.lower) && !(given(r.upper) && x > r.upper);
-}
-
-double requirement_error(const Requirement& r, const FigureInfo& f, double x) {
-  if (!given(x) || !(x > 0)) return kWorstError;
-  if (given(r.target)) {
-    const bool above = x > r.target;
-    const double distance = std::fabs(ln(x / r.target));
-    const double limit = above ? r.upper : r.lower;
-    if (!given(limit)) return std::min(distance / default_width(f), 1.0);
-    return distance / (above ? log_distance(r.target, limit) : log_distance(limit, r.target));
-  }
-  if (meets(r, x)) return 0;
-  const double limit = given(r.upper) && x > r.upper ? r.upper : r.lower;
-  return 1 + std::fabs(ln(x / limit)) / default_width(f);
 }
 
 Deviation deviation(const Requirement& r, const FigureInfo& f, double x) {
@@ -65,6 +52,14 @@ Deviation deviation(const Requirement& r, const FigureInfo& f, double x) {
   if (meets(r, x)) return {};
   const double limit = given(r.upper) && x > r.upper ? r.upper : r.lower;
   return {ln(x / limit) / default_width(f), 1 / default_width(f)};
+}
+
+double requirement_error(const Requirement& r, const FigureInfo& f, double x) {
+  if (!given(x) || !(x > 0)) return kWorstError;
+  const double distance = std::fabs(deviation(r, f, x).value);
+  if (!given(r.target)) return meets(r, x) ? 0 : 1 + distance;
+  const bool open_side = !given(x > r.target ? r.upper : r.lower);
+  return open_side ? std::min(distance, 1.0) : distance;
 }
 
 double requirement_margin(const Requirement& r, const FigureInfo& f, double x) {

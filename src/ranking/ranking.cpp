@@ -99,6 +99,7 @@ std::vector<std::vector<std::string>> best_at(const std::vector<Standing>& list)
       {"smallest capacitors", [](const Standing& s) { return s.total_capacitance; }},
   };
   std::vector<std::vector<std::string>> titles(list.size());
+  if (list.size() < 2) return titles;  // nothing to be best among
   for (const Title& t : kTitles) {
     const auto best = std::min_element(
         list.begin(), list.end(), [&](const Standing& a, const Standing& b) { return t.measure(a) < t.measure(b); });

@@ -18,7 +18,7 @@ namespace bandwright {
 namespace {
 
 constexpr std::size_t kRelaxations = 384;  // over all spaces together
-constexpr std::size_t kLeastStarts = 3;    // in each space
+constexpr std::size_t kLeastStarts = 1;    // in each space
 constexpr std::size_t kMostStarts = 64;
 constexpr std::size_t kRefinements = 96;   // relaxed points refined, over all spaces
 constexpr std::size_t kStartsInSpace = 2;  // refined in one space at least
@@ -207,6 +207,7 @@ SearchOutcome search(const Spec& spec, const Catalogue& catalogue, const std::ve
     return comes_before(a.standing, b.standing, options.rank_by);
   });
   if (found.empty() || !found.front().allowed) {
+    if (stop) return outcome;
     outcome.nearest_miss =
         found.empty() ? "no combination of values is offered" : describe_miss(found.front(), all, spec);
     return outcome;

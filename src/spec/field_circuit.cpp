@@ -9,9 +9,10 @@ namespace bandwright {
 
 namespace {
 
-constexpr double kLeastSupply = 0.1;                  // V
-constexpr double kMostSupply = 1000;                  // V, with high voltage allowed
-constexpr ValueRange kAmbient = {218.15, 398.15};     // K: -55 to 125 °C, the widest range that parts are sold for
+constexpr double kLeastSupply = 0.1;  // V
+constexpr double kMostSupply = 1000;  // V, with high voltage allowed
+// -55 to 125 °C, the widest range that parts are sold for; summed as a temperature is read, so that both ends are in it
+constexpr ValueRange kAmbient = {-55 + kZeroCelsius, 125 + kZeroCelsius};
 constexpr ValueRange kResistance = {0, 1e9};          // ohm
 constexpr ValueRange kLoadResistance = {1e-3, 1e12};  // ohm
 constexpr ValueRange kCapacitance = {0, 1e-3};        // F
