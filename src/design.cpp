@@ -44,6 +44,9 @@ DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOp
 
 DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values) {
   if (auto faults = check_against_catalogue(with_device(spec, device), catalogue); !faults.empty()) {
+    for (Fault& f : faults) {
+      if (f.where == "devices[0]") f.where = "device";
+    }
     throw InputError(std::move(faults));
   }
   const std::vector<DerivedDevice> devices = {derive_parameters(*catalogue.find_transistor(device))};

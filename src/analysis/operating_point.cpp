@@ -34,7 +34,7 @@ double highest_current(const Circuit<double>& c, const Bipolar<double>& device) 
 }  // namespace
 
 BiasSolution solve_bias(const Circuit<double>& c, const Bipolar<double>& device, double guess) {
-  double high = highest_current(c, device);
+  double high = ln(c.supply / (c[Role::collector] + c[Role::emitter] + c[Role::emitter_bypassed]));
   double low = std::min(device.log_saturation_current, high) - 50;
   const double tolerance =
       kResidual * c.supply * c[Role::lower_divider] / (c[Role::upper_divider] + c[Role::lower_divider]);
@@ -47,7 +47,13 @@ BiasSolution solve_bias(const Circuit<double>& c, const Bipolar<double>& device,
     const double step = -s.trial.residual / s.trial.slope;
     // the residual is met and the last Newton step no longer moves IC
     if (std::fabs(s.trial.residual) <= tolerance && std::fabs(step) <= 1e-13) break;
-    if (s.trial.residual > 0 && x >= high) return s;  // VCE would fall below 0 first
+    if (s.trial.residual > 0 && x >= high) {
+      const double with_leakage = highest_current(c, device);
+      if (!(with_leakage > high)) return s;  // VCE would fall below 0 first
+      low = x;
+      x = high = with_leakage;
+      continue;
+    }
     bracketed = bracketed || s.trial.residual <= 0;
     (s.trial.residual > 0 ? low : high) = x;
     double next = x + step;
