@@ -25,7 +25,9 @@ void check_devices(const Spec& spec, const Catalogue& catalogue, std::vector<Fau
     const std::string where = "devices[" + std::to_string(i) + "]";
     const Transistor* found = catalogue.find_transistor(type);
     if (found == nullptr) {
-      faults.push_back({where, type, "a transistor of the catalogue; a file in a folder given with --catalogue adds one", nearest_name(type, types)});
+      faults.push_back({where, type,
+                        "a transistor of the catalogue; a file in a folder given with --catalogue adds one",
+                        nearest_name(type, types)});
     } else if (found->pnp != spec.pnp()) {
       faults.push_back({where, type + (found->pnp ? ", PNP" : ", NPN"),
                         spec.pnp() ? "a PNP transistor, as the negative supply needs"
