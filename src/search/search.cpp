@@ -178,12 +178,11 @@ std::string describe_miss(const Found& f, const DesignSpaces& all, const Spec& s
     const Stage stage{v, &space.device->parameters, surroundings(spec)};
     const Analysis a = analyse(stage, gain_definition(spec));
     const double drop = a.point.collector_current * v[index(Role::collector)];
-    return "no combination of the offered values is active with VCE of at least 1 V and IC RC of at least 0.5 V within "
-           "the transistor's limits; the nearest (" +
-           f.standing.device + ") has VCE " +
-           format_quantity(a.point.collector_emitter_voltage, Dimension::voltage, 3) + ", IC RC " +
-           format_quantity(drop, Dimension::voltage, 3) + ", IC " +
-           format_quantity(a.point.collector_current, Dimension::current, 3);
+    const auto volts = [](double x) { return format_quantity(x, Dimension::voltage, 3); };
+    return "no combination of the offered values is active with VCE of at least " + volts(kLeastCollectorEmitter) +
+           " and IC RC of at least " + volts(kLeastCollectorDrop) + " within the transistor's limits; the nearest (" +
+           f.standing.device + ") has VCE " + volts(a.point.collector_emitter_voltage) + ", IC RC " + volts(drop) +
+           ", IC " + format_quantity(a.point.collector_current, Dimension::current, 3);
   }
   return "no combination of values is offered";
 }
