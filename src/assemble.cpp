@@ -53,7 +53,7 @@ CauseWidths widths_of(const OfferedParts& parts, const BipolarParameters& device
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     if (parts[i].value > 0) w[i] = half_width(parts[i].tolerance);
   }
-  w[kRoleCount] = gain_half_width(device, collector_current);
+  w[index(Cause::current_gain)] = gain_half_width(device, collector_current);
   return w;
 }
 
@@ -117,6 +117,7 @@ Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogu
   Candidate c;
   c.device = device.parameters.type;
   c.parameters = device.parameters;
+  c.offered = parts;
   PartValues printed{};
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     c.working_values[i] = parts[i].working_value;
@@ -129,7 +130,7 @@ Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogu
   c.analysis = analyse(stage, definition);
   c.poles_estimate = pole_model(stage, c.analysis, definition);
   c.poles = poles_and_zeros(c.analysis.transfer);
-  c.sensitivity = sensitivity(stage, c.analysis, definition);
+  c.sensitivity = sensitivity(stage, c.analysis, definition, ResponseModel::exact, all_causes());
   c.error = error(spec, c.analysis.figures);
   c.margins.fill(kNotComputed);
   for (const FigureInfo& f : figures()) {
@@ -150,14 +151,9 @@ Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogu
   return c;
 }
 
-void finish(DesignResult& result, const std::vector<Standing>& standings, const std::vector<DerivedDevice>& devices,
-            const std::string& nearest_miss) {
-  const auto titles = best_at(standings);
+void finish(DesignResult& result, const std::vector<DerivedDevice>& devices, const std::string& nearest_miss) {
   std::set<std::string> described;
-  for (std::size_t i = 0; i < result.candidates.size(); ++i) {
-    Candidate& c = result.candidates[i];
-    c.rank = static_cast<int>(i) + 1;
-    if (i < titles.size()) c.best_at = titles[i];
+  for (const Candidate& c : result.candidates) {
     result.met = result.met || (c.shortfalls.empty() && c.analysis.point.state == BiasState::active);
     if (!described.insert(c.device).second) continue;
     const auto used = std::find_if(devices.begin(), devices.end(),

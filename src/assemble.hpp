@@ -17,9 +17,7 @@ Spec with_device(Spec spec, const std::string& device);
 Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogue& catalogue,
                    const OfferedParts& parts);
 
-/// Ranks, titles, what rests on memory, explanations, and whether the spec is met. `standings` as in the candidates;
-/// may be empty for a check.
-void finish(DesignResult& result, const std::vector<Standing>& standings, const std::vector<DerivedDevice>& devices,
-            const std::string& nearest_miss);
+/// What rests on memory, explanations, and whether the spec is met.
+void finish(DesignResult& result, const std::vector<DerivedDevice>& devices, const std::string& nearest_miss);
 
 }  // namespace bandwright

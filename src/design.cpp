@@ -8,6 +8,7 @@
 #include <cmath>
 
 #include "assemble.hpp"
+#include "finalists.hpp"
 
 namespace bandwright {
 
@@ -32,17 +33,21 @@ DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOp
 
   std::vector<Standing> standings;
   for (const Found& f : outcome.found) standings.push_back(f.standing);
-  std::vector<Standing> kept;
-  for (std::size_t i : alternatives(standings, options.rank_by, static_cast<std::size_t>(spec.candidates))) {
+  std::vector<Candidate> finalists;
+  for (std::size_t i : finalists_of(standings, options.rank_by, static_cast<std::size_t>(spec.candidates))) {
     const Found& f = outcome.found[i];
-    result.candidates.push_back(assemble(spec, tried[f.device], catalogue, f.parts));
-    kept.push_back(f.standing);
+    finalists.push_back(assemble(spec, tried[f.device], catalogue, f.parts));
+    finalists.back().standing = f.standing;
   }
-  finish(result, kept, tried, outcome.nearest_miss);
+  assess_all(spec, options, finalists);
+  rank(result, std::move(finalists));
+  if (options.allocate) allocate(spec, catalogue, result);
+  finish(result, tried, outcome.nearest_miss);
   return result;
 }
 
-DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values) {
+DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values,
+                   const DesignOptions& options, const PartFamilies& families) {
   if (auto faults = check_against_catalogue(with_device(spec, device), catalogue); !faults.empty()) {
     for (Fault& f : faults) {
       if (f.where == "devices[0]") f.where = "device";
@@ -53,12 +58,15 @@ DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::stri
   OfferedParts parts;
   for (const RoleInfo& r : roles()) {
     const double value = values[index(r.role)];
-    if (value > 0) parts[index(r.role)] = resolve_value(catalogue, spec, r.role, value);
+    if (value > 0) parts[index(r.role)] = resolve_value(catalogue, spec, r.role, value, families[index(r.role)]);
   }
-  DesignResult result = empty_result(spec, RankBy::error);
+  DesignResult result = empty_result(spec, options.rank_by);
   result.searched = false;
-  result.candidates.push_back(assemble(spec, devices.front(), catalogue, parts));
-  finish(result, {}, devices, "");
+  std::vector<Candidate> one = {assemble(spec, devices.front(), catalogue, parts)};
+  assess_all(spec, options, one);
+  rank(result, std::move(one));
+  if (options.allocate) allocate(spec, catalogue, result);
+  finish(result, devices, "");
   return result;
 }
 

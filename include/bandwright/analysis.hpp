@@ -7,6 +7,7 @@
 #pragma once
 
 #include <array>
+#include <bandwright/cause.hpp>
 #include <bandwright/figure.hpp>
 #include <bandwright/stage.hpp>
 #include <complex>
@@ -126,12 +127,17 @@ struct Stress {
 Stress stress(const Stage& stage, const OperatingPoint& nominal, double supply_magnitude, double source_dc,
               double load_dc);
 
-/// S(y, x) = (x/y) dy/dx, exact derivatives. Last column: the current-gain multiplier.
-inline constexpr std::size_t kSensitivityCauses = kRoleCount + 1;
-using Sensitivity = std::array<std::array<double, kSensitivityCauses>, kFigureCount>;
+/// S(y, x) = (x/y) dy/dx, exact derivatives, by figure and cause; hFE: of the multiplier; VBE: x is its published
+/// value.
+using Sensitivity = std::array<std::array<double, kCauseCount>, kFigureCount>;
 
-/// Sensitivities of every computed figure to every part and hFE, junction rise held.
+/// Which causes are asked for; the columns of the others stay 0.
+using CauseSet = std::array<bool, kCauseCount>;
+CauseSet parts_and_gain();  ///< the parts that may be there, and hFE
+CauseSet all_causes();
+
+/// Sensitivities of every computed figure, junction rise held.
 Sensitivity sensitivity(const Stage& stage, const Analysis& analysis, const GainDefinition& definition,
-                        ResponseModel model = ResponseModel::exact);
+                        ResponseModel model = ResponseModel::exact, const CauseSet& wanted = parts_and_gain());
 
 }  // namespace bandwright

@@ -144,12 +144,14 @@ struct OfferedValue {
 };
 
 /// The values offered for a role under a spec's rules, rising by working value; one value where it is pinned.
-/// A capacitor comes from the family that is first choice at its value. The result points into `catalogue`.
+/// A capacitor comes from the family that is first choice at its value; where the spec names families, from each of
+/// them that is made at it. The result points into `catalogue`.
 std::vector<OfferedValue> offered_values(const Catalogue& catalogue, const Spec& spec, Role role);
 
 /// One value resolved as offered_values would: family, tolerance, working value. A value in no family's range
-/// takes the nearest family of its kind.
-OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, double value);
+/// takes the nearest family of its kind. `family`: the name or key of the one wanted, where the rules allow it.
+OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, double value,
+                           std::string_view family = {});
 
 /// The offered value in each role; an absent role has value 0.
 using OfferedParts = std::array<OfferedValue, kRoleCount>;

@@ -17,6 +17,7 @@
 #include <bandwright/stage.hpp>
 #include <functional>
 #include <map>
+#include <optional>
 #include <string>
 #include <vector>
 
@@ -33,6 +34,8 @@ struct Candidate {
   std::array<double, 2> gain_limits{};  ///< beta0 min and max at the operating current, 25 °C
   std::vector<Part> parts;
   PartValues working_values{};  ///< values at work, ohm and farad
+  OfferedParts offered;         ///< as bought: value, family, tolerance; points into the catalogue
+  Standing standing;            ///< what the order looks at
   Analysis analysis;            ///< analysis.figures are the figures
   PoleModel poles_estimate;
   PolesAndZeros poles;
@@ -43,11 +46,15 @@ struct Candidate {
   std::vector<Shortfall> shortfalls;
   std::map<std::string, std::string> notes;  ///< field to the reason why it is null, and hints
   std::vector<Package> packages;             ///< lead orders
+  std::optional<Assessment> assessment;      ///< what becomes of many units; only where the stage is active
+  std::optional<Allocation> allocation;      ///< on request, of the first candidate
+  bool non_dominated =
+      false;  ///< no other is as good in error, capability, current and number of parts, and better in one
 };
 
 struct DesignResult {
   Spec spec;
-  RankBy ranked_by = RankBy::error;
+  RankBy ranked_by = RankBy::capability;
   bool met = false;  ///< at least one candidate meets every requirement nominally
   bool interrupted = false;
   bool searched = true;  ///< false: given parts were recomputed
@@ -59,17 +66,23 @@ struct DesignResult {
   std::vector<Candidate> candidates;
 };
 
-/// How the search is run. None of these changes the answer, but for `keep_going`.
+/// How the search is run and what is computed beside it. Threads never change the answer.
 struct DesignOptions {
-  RankBy rank_by = RankBy::error;
+  RankBy rank_by = RankBy::capability;
   int threads = 0;                               ///< 0: as many as there are
+  bool with_response = false;                    ///< response, envelope, histograms, node voltages of each candidate
+  bool allocate = false;                         ///< tolerance allocation of the first candidate
   std::function<bool(double share)> keep_going;  ///< called now and then with the share done; false stops early
 };
 
 /// Searches. Throws InputError where the spec names a device that the catalogue does not hold.
 DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOptions& options = {});
 
+/// Names or keys of the families that given parts are bought from; empty: as the spec's rules have it.
+using PartFamilies = std::array<std::string, kRoleCount>;
+
 /// Recomputes given parts (0: absent) with one device. Requirements, where the spec has any, are compared.
-DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values);
+DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values,
+                   const DesignOptions& options = {}, const PartFamilies& families = {});
 
 }  // namespace bandwright

@@ -11,6 +11,7 @@
 
 #include <array>
 #include <bandwright/catalogue.hpp>
+#include <bandwright/cause.hpp>
 #include <string>
 #include <vector>
 
@@ -23,6 +24,13 @@ struct GainCurve {
   std::array<double, kMaxPoints> log_current{};
   std::array<double, kMaxPoints> log_gain{};
   std::array<double, kMaxPoints> slope{};  ///< d ln beta0 / d ln IC at the points
+};
+
+/// How far units of a type lie from its nominal value at most: as logarithm, VBE in volts.
+struct DeviceLimits {
+  double below = 0;
+  double above = 0;
+  bool published = false;  ///< false: assumed
 };
 
 /// Parameters at 25 °C.
@@ -46,6 +54,13 @@ struct BipolarParameters {
   double cutoff_current = 0;               ///< ICBO, A
   double saturation_voltage = 0.2;         ///< VCE(sat), V
   double thermal_resistance = 0;           ///< K/W
+  // how a unit's tauF follows from its own fT and capacitances at the published point of fT
+  double transit_delay = 0;      ///< 1/(2 pi fT), s
+  double emitter_charging = 0;   ///< Cje VT/IC, s
+  double feedback_charging = 0;  ///< Cmu VT/IC, s
+  double transit_deficit = 0;    ///< s by which the nominal difference of these was below 0 before it was taken as 0
+  double base_emitter_voltage = 0.65;              ///< at the published point, V
+  std::array<DeviceLimits, kCauseCount> limits{};  ///< of the causes that lie in the device; hFE: gain_min, gain_max
   // limits, not part of the equations
   double breakdown_voltage = 0;             ///< VCEO, V
   double current_limit = 0;                 ///< A

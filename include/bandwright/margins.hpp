@@ -21,6 +21,10 @@ double requirement_error(const Requirement& requirement, const FigureInfo& figur
 double requirement_margin(const Requirement& requirement, const FigureInfo& figure, double value);
 bool meets(const Requirement& requirement, double value);
 
+/// The same of a cutoff that was not solved: `ratio` is 2 |H|^2/A^2 at the frequency of the limit, which is not beyond
+/// the peak. A lower cutoff lies at or under the limit, an upper one at or above it, where the ratio is at least 1.
+bool meets_at_limit(Figure cutoff, bool upper_limit, double ratio);
+
 /// The error with its sign, for searches that need slopes: 0 at the target or inside the limits, +1 at U, -1 at L, on
 /// an open side not capped, without the step of 1 past a lone limit.
 struct Deviation {

@@ -32,6 +32,7 @@ struct StoredCandidate {
   int rank = 1;
   std::string device;
   PartValues values{};       ///< ohm and farad as printed; 0: absent
+  PartFamilies families;     ///< names of families; empty where the document states none
   FigureValues figures{};    ///< as the document states them, NaN where null; temperatures in kelvin
   bool has_figures = false;  ///< the document carries figures
 };

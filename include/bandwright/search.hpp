@@ -33,7 +33,7 @@ struct Found {
 };
 
 struct SearchOptions {
-  RankBy rank_by = RankBy::error;
+  RankBy rank_by = RankBy::capability;
   int threads = 0;                               ///< 0: as many as there are
   std::function<bool(double share)> keep_going;  ///< false stops early
 };

@@ -7,6 +7,7 @@
 #pragma once
 
 #include <array>
+#include <bandwright/cause.hpp>
 #include <bandwright/figure.hpp>
 #include <bandwright/role.hpp>
 #include <cstdint>
@@ -72,6 +73,18 @@ struct Parts {
   std::array<std::optional<double>, kRoleCount> pinned;      ///< fixed value; 0: the part is absent
 };
 
+/// How built units are assessed.
+struct Assess {
+  int units = 20000;        ///< simulated at most
+  double yield = 0.99;      ///< share of units that must pass
+  double interval = 0.005;  ///< the simulation stops when the 95 % interval is narrower; 0: never early
+  bool uniform = false;     ///< tolerances spread uniformly in place of normally
+  /// The user's limits in place of the usual ones: shares below and above, volts for the base-emitter voltage; both 0:
+  /// the cause is switched off.
+  std::array<std::optional<Tolerance>, kCauseCount> causes;
+  std::optional<double> temperature_coefficient;  ///< 1/K, two-sided, of every part; 0: switched off
+};
+
 struct Spec {
   std::string title;
   Condition supply;  ///< volt, signed
@@ -86,6 +99,7 @@ struct Spec {
   std::vector<std::string> devices;     ///< types; empty: every fitting one
   std::vector<std::string> topologies;  ///< "common-emitter"
   int candidates = 10;
+  Assess assess;
   std::uint64_t seed = 1;
   bool allow_high_voltage = false;  ///< from the command line only
   std::vector<std::string> notes;   ///< what reading changed: "output_swing: 2 Vpp read as 1 V peak"

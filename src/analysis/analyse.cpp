@@ -5,6 +5,7 @@
 #include "analysis/figure_equations.hpp"
 #include "analysis/operating_point.hpp"
 #include "analysis/response.hpp"
+#include "analysis/unit.hpp"
 #include "stage/pole_estimate.hpp"
 
 namespace bandwright {
@@ -49,6 +50,12 @@ Analysis analyse_response(const Stage& stage, const Circuit<double>& circuit, co
   a.figures = stage_figures<double>(circuit, t, h, {a.band.gain, a.band.lower, a.band.upper}, definition, *stage.device,
                                     a.point.junction_temperature);
   return a;
+}
+
+Analysis analyse_unit(const UnitPoint& unit, const GainDefinition& definition, double guess) {
+  const Circuit<double> circuit = unit_circuit(unit.stage, unit.factors);
+  return analyse_response(unit.stage, circuit, bias_at(unit.stage, circuit, unit.junction, guess, unit.factors),
+                          definition);
 }
 
 std::complex<double> TransferFunction::at(double frequency) const {

@@ -18,7 +18,7 @@ struct BandOf {
 
 template <class T>
 FigureArray<T> stage_figures(const Circuit<T>& c, const BiasTrial<T>& t, const HybridPi<T>& h, const BandOf<T>& band,
-                             const GainDefinition& definition, const BipolarParameters& device, double junction) {
+                             const GainDefinition& definition, const BipolarParameters& device, const T& junction) {
   const T one(1.0);
   FigureArray<T> f;
   f.fill(T(kNotComputed));
@@ -47,7 +47,7 @@ FigureArray<T> stage_figures(const Circuit<T>& c, const BiasTrial<T>& t, const H
   set(Figure::base_voltage, sign * v_b);
   set(Figure::emitter_voltage, sign * t.v_e);
   set(Figure::collector_voltage, sign * (t.v_ce + t.v_e));
-  set(Figure::junction_temperature, T(junction));
+  set(Figure::junction_temperature, junction);
   set(Figure::midband_gain, midband_gain(m, definition.from_input ? T(0.0) : c.source_resistance));
   set(Figure::swing_to_cutoff, to_cutoff);
   set(Figure::swing_to_saturation, to_saturation);

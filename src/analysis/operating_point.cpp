@@ -7,9 +7,7 @@ namespace bandwright {
 
 namespace {
 
-constexpr double kResidual = 1e-12;      // of Vth
-constexpr double kActiveMargin = 0.3;    // V over VCE(sat)
-constexpr double kLeakageRatio = 100.0;  // IC over ICBO
+constexpr double kResidual = 1e-12;  // of Vth
 
 /// ln IC of the textbook solution, VBE taken once from the exponential law.
 double first_guess(const Circuit<double>& c, const Bipolar<double>& device, double high) {
@@ -78,9 +76,10 @@ BiasState bias_state(const BiasSolution& s, const Bipolar<double>& device) {
   return BiasState::active;
 }
 
-NominalBias bias_at(const Stage& stage, const Circuit<double>& c, double junction, double guess) {
+NominalBias bias_at(const Stage& stage, const Circuit<double>& c, double junction, double guess,
+                    const UnitFactors<double>& unit) {
   NominalBias n;
-  n.device = at_temperature(*stage.device, junction, 1.0);
+  n.device = at_temperature(*stage.device, junction, unit);
   n.solution = solve_bias(c, n.device, guess);
   const BiasTrial<double>& t = n.solution.trial;
   OperatingPoint& p = n.point;

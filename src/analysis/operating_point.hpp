@@ -20,6 +20,9 @@ BiasSolution solve_bias(const Circuit<double>& circuit, const Bipolar<double>& d
 /// Active, saturated or cut off, as the definitions say.
 BiasState bias_state(const BiasSolution& solution, const Bipolar<double>& device);
 
+inline constexpr double kActiveMargin = 0.3;    ///< V over VCE(sat)
+inline constexpr double kLeakageRatio = 100.0;  ///< IC over ICBO
+
 /// The VCE that the active region needs: max(VCE(sat) + 0.3 V, VBE).
 double least_active_voltage(const BipolarParameters& device, double v_be);
 
@@ -31,7 +34,8 @@ struct NominalBias {
 };
 NominalBias nominal_bias(const Stage& stage, const Circuit<double>& circuit);
 
-/// The operating point at a junction temperature that is given (the rise held).
-NominalBias bias_at(const Stage& stage, const Circuit<double>& circuit, double junction, double guess = kNotComputed);
+/// The operating point at a junction temperature that is given (the rise held), of the nominal or any other unit.
+NominalBias bias_at(const Stage& stage, const Circuit<double>& circuit, double junction, double guess = kNotComputed,
+                    const UnitFactors<double>& unit = {});
 
 }  // namespace bandwright

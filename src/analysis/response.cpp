@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <functional>
 #include <vector>
 
 namespace bandwright {
@@ -165,6 +166,14 @@ Crossings find_crossings(const Transfer<double>& h, double reference_u) {
   c.lower = crossing_outwards(h, s, c.reference, level, first_above - 1, -1);
   c.upper = crossing_outwards(h, s, c.reference, level, first_above, +1);
   return c;
+}
+
+bool has_single_peak(const Transfer<double>& h) {
+  Samples s;
+  take_samples(h, scan_range(h), s);
+  const auto first = s.h.begin(), last = s.h.begin() + s.count;
+  const auto top = std::max_element(first, last);
+  return std::is_sorted(first, top) && std::is_sorted(top, last, std::greater<>());
 }
 
 }  // namespace bandwright

@@ -65,4 +65,7 @@ struct Crossings {
 /// `reference_u` > 0: A is taken there; 0: at the highest peak.
 Crossings find_crossings(const Transfer<double>& h, double reference_u);
 
+/// True where |H| rises to one peak and falls from it, on the samples of the scan.
+bool has_single_peak(const Transfer<double>& h);
+
 }  // namespace bandwright

@@ -3,6 +3,7 @@
 
 #include "analysis/figure_equations.hpp"
 #include "analysis/response.hpp"
+#include "analysis/unit.hpp"
 #include "numeric/dual.hpp"
 #include "stage/pole_estimate.hpp"
 
@@ -14,6 +15,13 @@ namespace {
 constexpr std::size_t kDirections = 2;
 using Lanes = Pack<kDirections>;
 using Number = Dual<Lanes>;
+
+/// A unit in dual numbers.
+struct Moving {
+  Circuit<Number> circuit;
+  Bipolar<Number> device;
+  Number junction;
+};
 
 /// From the converged doubles one Newton step a crossing carries the exact derivative; the peak needs none, since |H|
 /// is stationary there (envelope theorem).
@@ -29,14 +37,14 @@ BandOf<Number> exact_band(const Analysis& a, const Circuit<Number>& circuit, con
 
 /// Figures in dual numbers; the operating point too takes one Newton step from the converged one.
 FigureArray<Number> dual_figures(const Stage& stage, const Analysis& a, const GainDefinition& definition,
-                                 ResponseModel model, const Circuit<Number>& circuit, const Number& multiplier) {
-  const Bipolar<Number> device = at_temperature(*stage.device, Number(a.point.junction_temperature), multiplier);
+                                 ResponseModel model, const Moving& unit) {
+  const Bipolar<Number>& device = unit.device;
   const Number log_start(ln(a.point.collector_current));
-  const BiasTrial<Number> start = bias_trial(circuit, device, log_start);
+  const BiasTrial<Number> start = bias_trial(unit.circuit, device, log_start);
   const Number log_i_c = log_start - start.residual / Number(first_value(start.slope));
-  const BiasTrial<Number> t = bias_trial(circuit, device, log_i_c);
+  const BiasTrial<Number> t = bias_trial(unit.circuit, device, log_i_c);
   const HybridPi<Number> h = hybrid_pi(device, t.i_c, t.v_be, t.v_ce, t.gain);
-  const Circuit<Number> driven = gain_circuit(circuit, definition);
+  const Circuit<Number> driven = gain_circuit(unit.circuit, definition);
   BandOf<Number> band;
   if (model == ResponseModel::exact) {
     band = exact_band(a, driven, h);
@@ -44,31 +52,142 @@ FigureArray<Number> dual_figures(const Stage& stage, const Analysis& a, const Ga
     const PoleEstimate<Number> e = pole_estimate(driven, h);
     band = {e.gain, e.lower, e.upper};
   }
-  return stage_figures(circuit, t, h, band, definition, *stage.device, a.point.junction_temperature);
+  return stage_figures(unit.circuit, t, h, band, definition, *stage.device, unit.junction);
 }
+
+Circuit<Number> standing(const Circuit<double>& c) {
+  Circuit<Number> n;
+  for (std::size_t i = 0; i < kRoleCount; ++i) n.part[i] = Number(c.part[i]);
+  n.supply = Number(c.supply);
+  n.source_resistance = Number(c.source_resistance);
+  n.source_capacitance = Number(c.source_capacitance);
+  n.load_conductance = Number(c.load_conductance);
+  n.load_capacitance = Number(c.load_capacitance);
+  n.stray_input = Number(c.stray_input);
+  n.stray_output = Number(c.stray_output);
+  n.stray_feedback = Number(c.stray_feedback);
+  return n;
+}
+
+Bipolar<Number> standing(const Bipolar<double>& d) {
+  Bipolar<Number> n;
+  n.sheet = d.sheet;
+  n.inverse_early_voltage = Number(d.inverse_early_voltage);
+  n.base_resistance = Number(d.base_resistance);
+  n.transit_time = Number(d.transit_time);
+  n.emitter_capacitance = Number(d.emitter_capacitance);
+  n.feedback_capacitance = Number(d.feedback_capacitance);
+  n.thermal_voltage = Number(d.thermal_voltage);
+  n.log_saturation_current = Number(d.log_saturation_current);
+  n.log_gain_shift = Number(d.log_gain_shift);
+  n.cutoff_current = Number(d.cutoff_current);
+  return n;
+}
+
+/// A unit that stands, from which every pair of directions starts.
+struct StandingUnit {
+  const UnitPoint& unit;
+  Circuit<double> circuit;
+  Bipolar<double> device;
+
+  explicit StandingUnit(const UnitPoint& u)
+      : unit(u),
+        circuit(unit_circuit(u.stage, u.factors)),
+        device(at_temperature(*u.stage.device, u.junction, u.factors)) {}
+};
+
+/// What a direction does to the circuit; the device follows where one of its causes or the junction moves.
+void tilt(Circuit<Number>& c, const UnitPoint& unit, const Direction& d, std::size_t lane) {
+  const Surroundings& a = unit.stage.around;
+  const auto by = [&d](Cause cause) { return d.factors[index(cause)]; };
+  for (std::size_t i = 0; i < kRoleCount; ++i) c.part[i].slope.set(lane, unit.stage.parts[i] * d.factors[i]);
+  c.supply.slope.set(lane, d.supply);
+  c.source_resistance.slope.set(lane, a.source_resistance * by(Cause::source_resistance));
+  c.source_capacitance.slope.set(lane, a.source_capacitance * by(Cause::source_capacitance));
+  const double f = unit.factors[Cause::load_resistance];
+  c.load_conductance.slope.set(lane, -a.load_conductance / (f * f) * by(Cause::load_resistance));
+  c.load_capacitance.slope.set(lane, a.load_capacitance * by(Cause::load_capacitance));
+  c.stray_input.slope.set(lane, a.stray.input * by(Cause::stray_input));
+  c.stray_output.slope.set(lane, a.stray.output * by(Cause::stray_output));
+  c.stray_feedback.slope.set(lane, a.stray.feedback * by(Cause::stray_feedback));
+}
+
+bool moves_device(const Direction& d) {
+  if (d.junction != 0) return true;
+  for (std::size_t i = index(Cause::current_gain); i <= index(Cause::base_emitter_voltage); ++i) {
+    if (d.factors[i] != 0) return true;
+  }
+  return false;
+}
+
+/// The unit with as many directions in its slopes as there are lanes, from `first` on.
+Moving moving(const StandingUnit& from, const std::vector<Direction>& directions, std::size_t first) {
+  Moving m{standing(from.circuit), standing(from.device), Number(from.unit.junction)};
+  UnitFactors<Number> factors;
+  bool device_moves = false;
+  for (std::size_t i = 0; i < kCauseCount; ++i) factors.of[i] = Number(from.unit.factors.of[i]);
+  for (std::size_t lane = 0; lane < kDirections && first + lane < directions.size(); ++lane) {
+    const Direction& d = directions[first + lane];
+    tilt(m.circuit, from.unit, d, lane);
+    device_moves = device_moves || moves_device(d);
+    for (std::size_t i = 0; i < kCauseCount; ++i) factors.of[i].slope.set(lane, d.factors[i]);
+    m.junction.slope.set(lane, d.junction);
+  }
+  if (device_moves) m.device = at_temperature(*from.unit.stage.device, m.junction, factors);
+  return m;
+}
+
+bool is_part(std::size_t cause) { return cause < kRoleCount; }
 
 }  // namespace
 
+CauseSet parts_and_gain() {
+  CauseSet set{};
+  for (std::size_t i = 0; i < kRoleCount; ++i) set[i] = true;
+  set[index(Cause::current_gain)] = true;
+  return set;
+}
+
+CauseSet all_causes() {
+  CauseSet set{};
+  set.fill(true);
+  return set;
+}
+
+std::vector<FigureValues> slopes(const UnitPoint& unit, const Analysis& analysis, const GainDefinition& definition,
+                                 const std::vector<Direction>& directions, ResponseModel model) {
+  std::vector<FigureValues> list(directions.size());
+  const StandingUnit from(unit);
+  for (std::size_t first = 0; first < directions.size(); first += kDirections) {
+    const FigureArray<Number> f =
+        dual_figures(unit.stage, analysis, definition, model, moving(from, directions, first));
+    for (std::size_t lane = 0; lane < kDirections && first + lane < directions.size(); ++lane) {
+      FigureValues& row = list[first + lane];
+      for (std::size_t i = 0; i < kFigureCount; ++i) row[i] = f[i].slope[lane] / f[i].value[lane];
+    }
+  }
+  return list;
+}
+
 Sensitivity sensitivity(const Stage& stage, const Analysis& analysis, const GainDefinition& definition,
-                        ResponseModel model) {
+                        ResponseModel model, const CauseSet& wanted) {
   Sensitivity s;
-  for (auto& row : s) row.fill(kNotComputed);
-  if (analysis.point.state != BiasState::active) return s;
-  for (std::size_t first = 0; first < kSensitivityCauses; first += kDirections) {
-    Circuit<Number> circuit = circuit_of<Number>(stage);
-    Number multiplier(1.0);
-    // a slope equal to the value makes every derivative relative: x dy/dx
-    for (std::size_t lane = 0; lane < kDirections && first + lane < kSensitivityCauses; ++lane) {
-      const std::size_t cause = first + lane;
-      Number& x = cause < kRoleCount ? circuit.part[cause] : multiplier;
-      x.slope.set(lane, first_value(x.value));
-    }
-    const FigureArray<Number> f = dual_figures(stage, analysis, definition, model, circuit, multiplier);
-    for (std::size_t i = 0; i < kFigureCount; ++i) {
-      for (std::size_t lane = 0; lane < kDirections && first + lane < kSensitivityCauses; ++lane) {
-        s[i][first + lane] = f[i].slope[lane] / f[i].value[lane];
-      }
-    }
+  const bool active = analysis.point.state == BiasState::active;
+  for (auto& row : s) row.fill(active ? 0.0 : kNotComputed);
+  if (!active) return s;
+  UnitPoint unit{stage, {}, analysis.point.junction_temperature};
+  std::vector<Direction> directions;
+  std::vector<std::size_t> columns;
+  for (std::size_t i = 0; i < kCauseCount; ++i) {
+    if (!wanted[i] || (is_part(i) && !(stage.parts[i] > 0))) continue;
+    Direction d;
+    d.factors[i] = i == index(Cause::base_emitter_voltage) ? stage.device->base_emitter_voltage : 1.0;
+    directions.push_back(d);
+    columns.push_back(i);
+  }
+  const std::vector<FigureValues> found = slopes(unit, analysis, definition, directions, model);
+  for (std::size_t k = 0; k < columns.size(); ++k) {
+    for (std::size_t i = 0; i < kFigureCount; ++i) s[i][columns[k]] = found[k][i];
   }
   return s;
 }

@@ -26,7 +26,7 @@ double tolerance_sensitivity(const Spec& spec, const Sensitivity& sensitivity, c
     const auto& r = spec.requirement(f.figure);
     if (!r) continue;
     double sum = 0;
-    for (std::size_t i = 0; i < kSensitivityCauses; ++i) {
+    for (std::size_t i = 0; i < kCauseCount; ++i) {
       const double part = sensitivity[index(f.figure)][i] * widths[i];
       sum += part * part;
     }

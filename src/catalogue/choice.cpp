@@ -79,6 +79,15 @@ const OfferedFamily* Choice::at(double value) const {
   return nullptr;
 }
 
+std::vector<const OfferedFamily*> Choice::all_at(double value) const {
+  std::vector<const OfferedFamily*> list;
+  for (const OfferedFamily& f : families_) {
+    if (named_ && holds(own_range(f), value)) list.push_back(&f);
+  }
+  if (const OfferedFamily* one = at(value); one != nullptr && !named_) list.push_back(one);
+  return list;
+}
+
 const OfferedFamily* Choice::nearest(double value) const {
   if (const OfferedFamily* serving = at(value)) return serving;
   const auto nearer = [&](const OfferedFamily& a, const OfferedFamily& b) {

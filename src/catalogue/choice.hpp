@@ -41,7 +41,9 @@ public:
 
   /// The family that serves a value; nullptr where none is made there.
   const OfferedFamily* at(double value) const;
-  /// The same; where none serves, the one whose range lies nearest; nullptr where there is no family.
+  /// Every named family that is made at a value, in order; without names the one that serves it.
+  std::vector<const OfferedFamily*> all_at(double value) const;
+  /// The one that serves; where none does, the one whose range lies nearest; nullptr where there is no family.
   const OfferedFamily* nearest(double value) const;
 
   /// From the lowest to the highest first choice; of named families, all that they are made in.

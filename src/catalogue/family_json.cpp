@@ -10,8 +10,6 @@ namespace bandwright {
 
 namespace {
 
-constexpr double kPartsPerMillion = 1e-6;
-
 Dimension dimension_of(PartKind kind) {
   return kind == PartKind::resistor ? Dimension::resistance : Dimension::capacitance;
 }
@@ -81,21 +79,12 @@ void read_tolerances(const JsonPlace& place, Family& family) {
   }
 }
 
-// "50 ppm/K" or "0.5 %/K".
 double per_kelvin(const JsonPlace& place) {
-  const std::string expected = "a share for each kelvin such as 50 ppm/K or 0.5 %/K";
-  const std::optional<std::string> text = place.text(expected);
-  if (!text) return 0;
-  const bool per_million = text->ends_with("ppm/K");
-  const bool per_hundred = text->ends_with("%/K");
-  const std::string number = text->substr(0, text->size() - (per_million ? 5 : per_hundred ? 2 : 0));
-  std::string unused;
-  const std::optional<Quantity> share = read_quantity(number, Dimension::fraction, unused);
-  if (share && share->value >= 0 && (per_million || per_hundred)) {
-    return share->value * (per_million ? kPartsPerMillion : 1);
-  }
-  place.fault(expected);
-  return 0;
+  std::string expected;
+  const std::string text = place.value().is_string() ? place.value().get<std::string>() : "";
+  const std::optional<double> share = read_per_kelvin(text, expected);
+  if (!share) place.fault(expected);
+  return share.value_or(0);
 }
 
 void read_ratings(const JsonPlace& place, Family& family) {

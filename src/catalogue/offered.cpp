@@ -1,8 +1,8 @@
 // The values that can be bought for a role, and how a value of a role is bought.
 //
-// The order of families. Where the spec names families, a value comes from the first of them that is made at it. Where
-// it names none, each value comes from the family that is first choice there; below the lowest and above the highest
-// first choice, the outermost family serves as far as it is made.
+// The order of families. Where the spec names families, a value is offered from each of them that is made at it, in the
+// order named. Where it names none, each value comes from the family that is first choice there; below the lowest and
+// above the highest first choice, the outermost family serves as far as it is made.
 #include <algorithm>
 #include <bandwright/catalogue.hpp>
 #include <cmath>
@@ -76,25 +76,36 @@ std::vector<double> candidate_values(const Choice& choice, const ValueRange& ran
 }  // namespace
 
 std::vector<OfferedValue> offered_values(const Catalogue& catalogue, const Spec& spec, Role role) {
-  if (const auto& pinned = spec.parts.pinned[index(role)]) return {resolve_value(catalogue, spec, role, *pinned)};
   const PartRules& rules = rules_for(spec, role);
   const Choice choice(catalogue, rules, info(role).kind);
+  const auto& pinned = spec.parts.pinned[index(role)];
   std::vector<OfferedValue> offered;
-  for (const double value : candidate_values(choice, allowed_range(spec, choice, role))) {
-    const OfferedFamily* from = choice.at(value);
-    if (from != nullptr && in_family_series(*from->family, rules, value)) offered.push_back(offer(*from, value, spec));
+  const auto offer_all = [&](double value) {
+    for (const OfferedFamily* from : choice.all_at(value)) {
+      if (pinned || in_family_series(*from->family, rules, value)) offered.push_back(offer(*from, value, spec));
+    }
+  };
+  if (pinned) {
+    offer_all(*pinned);
+    if (offered.empty()) offered.push_back(resolve_value(catalogue, spec, role, *pinned));
+    return offered;
   }
+  for (const double value : candidate_values(choice, allowed_range(spec, choice, role))) offer_all(value);
   // In deep cold the smallest electrolytic may work below the largest film capacitor.
   std::stable_sort(offered.begin(), offered.end(),
                    [](const OfferedValue& x, const OfferedValue& y) { return x.working_value < y.working_value; });
   return offered;
 }
 
-OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, double value) {
+OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, double value,
+                           std::string_view family) {
   if (!(value > 0)) return {};  // the part is absent
   const PartRules& rules = rules_for(spec, role);
   const PartKind kind = info(role).kind;
   const Choice choice(catalogue, rules, kind);
+  for (const OfferedFamily& from : choice.families()) {
+    if (from.family->name == family || from.family->key == family) return offer(from, value, spec);
+  }
   if (const OfferedFamily* from = choice.nearest(value)) return offer(*from, value, spec);
   // No family is as tight as asked for: the part is what it is, at its tightest.
   const Choice loose = Choice::tightest(catalogue, rules, kind);

@@ -46,7 +46,9 @@ std::vector<OptionGroup> options() {
   const OptionGroup parts = part_options();
   OptionGroup keys = spec_option_group();
   std::erase_if(keys.options, [&](const Option& option) { return is_named(parts, option.name); });
-  OptionGroup surroundings{"Catalogue and limits", {catalogue_option(), high_voltage_option()}, false};
+  OptionGroup surroundings{"Assessment, catalogue and limits",
+                           {allocate_option(), response_option(), catalogue_option(), high_voltage_option()},
+                           false};
   return {parts, output_options(), surroundings, keys};
 }
 
@@ -54,6 +56,7 @@ std::vector<OptionGroup> options() {
 struct Subject {
   std::string device;
   PartValues values{};
+  PartFamilies families;
   std::optional<StoredCandidate> stored;  ///< from a result document
   bool altered = false;                   ///< the command line changed something of it
 };
@@ -78,6 +81,7 @@ void take_options(const Arguments& arguments, Subject& subject) {
     subject.altered = true;
     try {
       subject.values[index(role.role)] = part_value(role, *text);
+      subject.families[index(role.role)].clear();
     } catch (const UsageError& fault) {
       if (!faults.empty()) faults += '\n';
       faults += fault.what();
@@ -98,6 +102,7 @@ Subject subject_of(const Arguments& arguments, const NamedText& input, const Spe
     subject.stored = read_candidate(input.text, input.name, rank);
     subject.device = subject.stored->device;
     subject.values = subject.stored->values;
+    subject.families = subject.stored->families;
   } else if (pick) {
     throw UsageError("--pick: needs a result document, as written by bandwright design --format json");
   } else {
@@ -163,7 +168,10 @@ int run_check(const Arguments& arguments) {
   const Subject subject = subject_of(arguments, input, spec);
   demand_parts(subject);
   const Catalogue catalogue = catalogue_of(arguments);
-  const DesignResult result = check(spec, catalogue, subject.device, subject.values);
+  DesignOptions choice;
+  choice.with_response = arguments.has("with-response");
+  choice.allocate = arguments.has("allocate");
+  const DesignResult result = check(spec, catalogue, subject.device, subject.values, choice, subject.families);
   const Confirmation confirmation = confirm(subject, result, input.name);
   tell_notes(spec, format, arguments);
   std::string text = formatted(result, format, destination);

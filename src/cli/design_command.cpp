@@ -13,12 +13,25 @@ namespace {
 
 constexpr int kMostThreads = 1024;
 
+// "capability (default), error, ... or parts"
+std::string orders_text(const char* last = ", ") {
+  std::string text;
+  for (const RankOrder& order : rank_orders()) {
+    const bool is_last = &order == &rank_orders().back();
+    if (!text.empty()) text += is_last ? last : ", ";
+    text += order.word;
+    if (order.by == RankBy::capability) text += " (default)";
+  }
+  return text;
+}
+
 std::vector<OptionGroup> options() {
   OptionGroup search{
       "Search",
-      {{"rank", "error|sensitivity",
-        "what comes first in the list: the error (default), or the sensitivity to tolerances"},
+      {{"rank", "ORDER", "what comes first in the list: " + orders_text()},
        {"threads", "N", "threads to use; the answer is the same on any number (default: as many as there are)"},
+       allocate_option(),
+       response_option(),
        catalogue_option(),
        {"print-spec", "", "print the spec with every default filled in, and search nothing"},
        high_voltage_option()},
@@ -27,15 +40,18 @@ std::vector<OptionGroup> options() {
 }
 
 RankBy rank_of(const Arguments& arguments) {
-  const std::string word = arguments.value("rank").value_or("error");
-  if (word == "error") return RankBy::error;
-  if (word == "sensitivity") return RankBy::sensitivity;
-  throw UsageError("--rank: found '" + printable(word) + "'; expected error or sensitivity");
+  const auto word = arguments.value("rank");
+  if (!word) return RankBy::capability;
+  for (const RankOrder& order : rank_orders())
+    if (*word == order.word) return order.by;
+  throw UsageError("--rank: found '" + printable(*word) + "'; expected " + orders_text(" or "));
 }
 
 DesignOptions design_options(const Arguments& arguments) {
   DesignOptions choice;
   choice.rank_by = rank_of(arguments);
+  choice.with_response = arguments.has("with-response");
+  choice.allocate = arguments.has("allocate");
   if (const auto threads = arguments.value("threads"))
     choice.threads = whole_number("threads", *threads, 1, kMostThreads);
   return choice;
@@ -91,8 +107,8 @@ Command design_command() {
           "are sold. A result document is accepted in the place of a spec: its spec is read.",
           {"bandwright design examples/hydrophone-line.json",
            "bandwright design --gain 34dB --lower-cutoff 40Hz --upper-cutoff 20kHz --supply 12V --load-resistance 10k",
-           "bandwright design stage.json --rank sensitivity --format json -o result.json",
-           "bandwright design stage.json --supply 9V --print-spec"},
+           "bandwright design stage.json --rank yield --format json -o result.json",
+           "bandwright design stage.json --allocate", "bandwright design stage.json --supply 9V --print-spec"},
           options,
           run_design};
 }

@@ -38,6 +38,15 @@ OptionGroup spec_option_group() {
 
 Option catalogue_option() { return {"catalogue", "FOLDER", "add the JSON files of FOLDER to the built-in catalogue"}; }
 
+Option allocate_option() {
+  return {"allocate", "", "the loosest tolerance of each part of the first candidate that still gives the yield"};
+}
+
+Option response_option() {
+  return {"with-response", "",
+          "response with the envelope of all units, histograms and node voltages of each candidate, in JSON"};
+}
+
 Option high_voltage_option() {
   return {"allow-high-voltage", "", "accept a supply above 60 V; read the cautions first"};
 }

@@ -14,6 +14,8 @@ enum class Format { table, json, csv };
 OptionGroup output_options();     ///< --format, --output, --quiet
 OptionGroup spec_option_group();  ///< every key of the spec
 Option catalogue_option();        ///< --catalogue
+Option allocate_option();         ///< --allocate
+Option response_option();         ///< --with-response
 Option high_voltage_option();     ///< --allow-high-voltage
 
 /// --format, else by the ending of the output's name, else a table.

@@ -40,8 +40,12 @@ Nominal limit_or(const SheetFigure& figure, Dimension dimension, double otherwis
 }
 
 ChosenPoint chosen(const FigurePoint& point, const Nominal& value) {
-  return {value, point.collector_current, point.collector_emitter_voltage,
-          std::isnan(point.reverse_voltage) ? 0.0 : point.reverse_voltage};
+  return {value,
+          point.collector_current,
+          point.collector_emitter_voltage,
+          std::isnan(point.reverse_voltage) ? 0.0 : point.reverse_voltage,
+          point.min.value,
+          point.max.value};
 }
 
 double distance_in_ln(double a, double b) {
@@ -70,7 +74,7 @@ ChosenPoint base_emitter_point(const Transistor& transistor) {
   // A lone limit is a limit, not a point.
   ChosenPoint point = best_point(transistor.base_emitter_voltage, {}, Dimension::voltage, kBaseEmitterCurrent);
   if (!point.nominal.stated()) {
-    point = {assumed(kAssumedBaseEmitter), kAssumedBaseEmitterAt, kUnstatedVoltage, 0};
+    point = {assumed(kAssumedBaseEmitter), kAssumedBaseEmitterAt, kUnstatedVoltage, 0, kNotComputed, kNotComputed};
   }
   return point;
 }
@@ -119,9 +123,10 @@ ChosenFigures choose_figures(const Transistor& t, std::vector<Fault>& faults) {
   c.transition = best_point(t.transition_frequency, kTransitionLimit, Dimension::frequency, kTransitionCurrent);
   c.output_capacitance = best_point(t.output_capacitance, kCapacitanceLimit, Dimension::capacitance, 0);
   c.input_capacitance = best_point(t.input_capacitance, kCapacitanceLimit, Dimension::capacitance, 0);
-  if (!c.input_capacitance.nominal.stated()) c.input_capacitance = {assumed(kAssumedInput), 0, 0, 0};
+  if (!c.input_capacitance.nominal.stated())
+    c.input_capacitance = {assumed(kAssumedInput), 0, 0, 0, kNotComputed, kNotComputed};
   c.cutoff = best_point(t.cutoff_current, kCutoffLimit, Dimension::current, 0);
-  if (!c.cutoff.nominal.stated()) c.cutoff = {assumed(0), 0, 0, 0};
+  if (!c.cutoff.nominal.stated()) c.cutoff = {assumed(0), 0, 0, 0, kNotComputed, kNotComputed};
   check_needs(t, c, faults);
   return c;
 }

@@ -17,6 +17,8 @@ struct ChosenPoint {
   double collector_current = kNotComputed;
   double collector_emitter_voltage = kNotComputed;
   double reverse_voltage = 0;
+  double min = kNotComputed;  ///< published there
+  double max = kNotComputed;
 };
 
 struct ChosenFigures {

@@ -5,6 +5,7 @@
 #include <cmath>
 
 #include "device/chosen_figures.hpp"
+#include "device/device_limits.hpp"
 #include "numeric/elementary.hpp"
 #include "units/constants.hpp"
 
@@ -30,13 +31,17 @@ double base_emitter_at(const BipolarParameters& p, double i_c, double v_ce) {
 }
 
 // tauF from 1/(2 pi fT) = tauF + (VT/IC)(Cje + Cmu) at the published point; it may come out negative.
-double transit_time(const BipolarParameters& p, const ChosenPoint& point) {
-  if (std::isinf(point.nominal.value)) return 0;
+void set_transit_time(BipolarParameters& p, const ChosenPoint& point) {
+  if (std::isinf(point.nominal.value)) return;
   const double v_be = base_emitter_at(p, point.collector_current, point.collector_emitter_voltage);
   const double v_cb = std::max(point.collector_emitter_voltage - v_be, 0.0);
-  const double c_mu = p.feedback_capacitance / depletion(p, v_cb);
-  const double charging = kThermalVoltage / point.collector_current * (p.emitter_capacitance + c_mu);
-  return 1 / (2 * kPi * point.nominal.value) - charging;
+  const double r_e = kThermalVoltage / point.collector_current;
+  p.transit_delay = 1 / (2 * kPi * point.nominal.value);
+  p.emitter_charging = r_e * p.emitter_capacitance;
+  p.feedback_charging = r_e * p.feedback_capacitance / depletion(p, v_cb);
+  const double tau = p.transit_delay - (p.emitter_charging + p.feedback_charging);
+  p.transit_time = std::max(tau, 0.0);
+  p.transit_deficit = std::max(-tau, 0.0);
 }
 
 double highest_stated(const Transistor& transistor, double chosen) {
@@ -68,10 +73,12 @@ BipolarParameters parameters_from(const Transistor& transistor, const ChosenFigu
   p.feedback_capacitance = c.output_capacitance.nominal.value * depletion(p, c.output_capacitance.reverse_voltage);
   p.emitter_capacitance =
       kForwardOverZeroBias * c.input_capacitance.nominal.value * depletion(p, c.input_capacitance.reverse_voltage);
-  p.transit_time = std::max(transit_time(p, c.transition), 0.0);
+  set_transit_time(p, c.transition);
   p.cutoff_current = c.cutoff.nominal.value;
   p.saturation_voltage = c.saturation_voltage.value;
   p.thermal_resistance = c.thermal_resistance.value;
+  p.base_emitter_voltage = c.base_emitter.nominal.value;
+  p.limits = device_limits(c);
   set_limits(p, transistor, c);
   return p;
 }
@@ -149,10 +156,9 @@ DerivedDevice derive_parameters(const Transistor& transistor) {
   DerivedDevice derived;
   derived.parameters = parameters_from(transistor, chosen);
   derived.assumptions = assumptions_of(transistor.type, chosen);
-  const double tau = transit_time(derived.parameters, chosen.transition);
-  if (tau < 0) {
+  if (const double deficit = derived.parameters.transit_deficit; deficit > 0) {
     derived.assumptions.push_back(transistor.type + ": base transit time taken as 0; fT and the capacitances give " +
-                                  format_quantity(tau, Dimension::time));
+                                  format_quantity(-deficit, Dimension::time));
   }
   derived.weak_inputs = weak_inputs(transistor, chosen);
   return derived;

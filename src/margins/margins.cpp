@@ -41,6 +41,11 @@ bool meets(const Requirement& r, double x) {
   return !(given(r.lower) && x < r.lower) && !(given(r.upper) && x > r.upper);
 }
 
+bool meets_at_limit(Figure cutoff, bool upper_limit, double ratio) {
+  const bool inside_is_high = (cutoff == Figure::lower_cutoff) == upper_limit;
+  return inside_is_high ? ratio >= 1 : ratio <= 1;
+}
+
 Deviation deviation(const Requirement& r, const FigureInfo& f, double x) {
   if (given(r.target)) {
     const bool above = x > r.target;

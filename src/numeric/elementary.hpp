@@ -18,13 +18,13 @@ namespace detail {
 
 inline std::uint64_t to_bits(double x) { return std::bit_cast<std::uint64_t>(x); }
 inline double from_bits(std::uint64_t b, double) { return std::bit_cast<double>(b); }
-template <std::size_t N>
-typename Pack<N>::Bits to_bits(const Pack<N>& x) {
-  return (typename Pack<N>::Bits)x.lanes;
+template <std::size_t N, class Isa>
+typename Pack<N, Isa>::Bits to_bits(const Pack<N, Isa>& x) {
+  return (typename Pack<N, Isa>::Bits)x.lanes;
 }
-template <std::size_t N>
-Pack<N> from_bits(typename Pack<N>::Bits b, const Pack<N>&) {
-  return Pack<N>((typename Pack<N>::Vector)b);
+template <std::size_t N, class Isa>
+Pack<N, Isa> from_bits(typename Pack<N, Isa>::Bits b, const Pack<N, Isa>&) {
+  return Pack<N, Isa>((typename Pack<N, Isa>::Vector)b);
 }
 
 inline constexpr double kRoundShift = 6755399441055744.0;  // 1.5 * 2^52: adding it rounds to an integer in the low bits
@@ -78,17 +78,17 @@ inline double ln(double x) { return detail::logarithm(x); }
 inline double e_to(double x) { return detail::exponential(x); }
 inline double square_root(double x) { return std::sqrt(x); }
 
-template <std::size_t N>
-Pack<N> ln(const Pack<N>& x) {
+template <std::size_t N, class Isa>
+Pack<N, Isa> ln(const Pack<N, Isa>& x) {
   return detail::logarithm(x);
 }
-template <std::size_t N>
-Pack<N> e_to(const Pack<N>& x) {
+template <std::size_t N, class Isa>
+Pack<N, Isa> e_to(const Pack<N, Isa>& x) {
   return detail::exponential(x);
 }
-template <std::size_t N>
-Pack<N> square_root(const Pack<N>& x) {
-  Pack<N> y;
+template <std::size_t N, class Isa>
+Pack<N, Isa> square_root(const Pack<N, Isa>& x) {
+  Pack<N, Isa> y;
   for (std::size_t i = 0; i < N; ++i) y.set(i, std::sqrt(x[i]));
   return y;
 }

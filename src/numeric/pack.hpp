@@ -1,6 +1,8 @@
 // Pack<N>: N doubles side by side, over the compiler's vector extension.
 //
-// The explicit alignment keeps the layout the same whatever instruction set a translation unit is built for.
+// The explicit alignment keeps the layout the same whatever instruction set a translation unit is built for. Code that
+// is built for a special one names it in `Isa`: every function made for such lanes then has a name of its own, and the
+// linker never puts it where another machine's code would run.
 #pragma once
 
 #include <cstddef>
@@ -19,7 +21,10 @@ struct VectorTypes {
   typedef std::uint64_t Word __attribute__((vector_size(8 * N)));
 };
 
-template <std::size_t N>
+/// The instruction set that every machine of the kind has.
+struct AnyMachine {};
+
+template <std::size_t N, class Isa = AnyMachine>
 struct alignas(8 * N) Pack {
   using Vector = typename VectorTypes<N>::Number;
   using Mask = typename VectorTypes<N>::Integer;
@@ -46,5 +51,23 @@ struct alignas(8 * N) Pack {
   }
   friend double first_value(const Pack& x) { return x.lanes[0]; }
 };
+
+/// How many numbers stand side by side in a T, and each of them.
+template <class T>
+inline constexpr std::size_t kLaneCount = 1;
+template <std::size_t N, class Isa>
+inline constexpr std::size_t kLaneCount<Pack<N, Isa>> = N;
+
+inline void set_lane(double& x, std::size_t, double value) { x = value; }
+template <std::size_t N, class Isa>
+void set_lane(Pack<N, Isa>& x, std::size_t i, double value) {
+  x.set(i, value);
+}
+
+inline double lane(const double& x, std::size_t) { return x; }
+template <std::size_t N, class Isa>
+double lane(const Pack<N, Isa>& x, std::size_t i) {
+  return x[i];
+}
 
 }  // namespace bandwright

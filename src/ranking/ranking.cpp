@@ -1,6 +1,8 @@
 #include <algorithm>
+#include <array>
 #include <bandwright/ranking.hpp>
 #include <cmath>
+#include <functional>
 #include <limits>
 #include <tuple>
 
@@ -12,6 +14,7 @@ namespace {
 
 constexpr double kErrorStep = 0.05;
 constexpr double kSensitivityStep = 1.05;
+constexpr double kCurrentStep = 1.02;  // supply currents closer than this are alike
 constexpr double kCurrentApart = 1.5;
 constexpr double kPartApart = 1.2;
 constexpr int kPartsApart = 3;
@@ -38,6 +41,46 @@ int leading_class(double error, RankBy by) {
   return error <= 1 ? 0 : 1 + error_class(error);
 }
 
+const std::vector<RankOrder>& rank_orders() {
+  static const std::vector<RankOrder> rows = {
+      {RankBy::capability, "capability", "highest capability first, ties by error"},
+      {RankBy::error, "error", "smallest error in steps of 0.05 first, then the smaller tolerance sensitivity"},
+      {RankBy::sensitivity, "sensitivity", "smallest tolerance sensitivity first"},
+      {RankBy::yield, "yield", "largest share of units that pass first, then the higher capability"},
+      {RankBy::worst_case, "worst-case", "largest margin at the worst corner first"},
+      {RankBy::current, "current", "smallest supply current first"},
+      {RankBy::parts, "parts", "fewest parts first, then the fewest distinct values"},
+  };
+  return rows;
+}
+
+const RankOrder& info(RankBy by) { return rank_orders()[static_cast<std::size_t>(by)]; }
+
+bool wants_capability(RankBy by) { return by == RankBy::capability || by == RankBy::yield || by == RankBy::worst_case; }
+
+double measure(const RankKey& k, RankBy by) {
+  switch (by) {
+    case RankBy::error:
+      return 0;
+    case RankBy::sensitivity:
+      return sensitivity_class(k.tolerance_sensitivity);
+    case RankBy::current:
+      return std::floor(ln(std::max(k.supply_current, 1e-12)) / ln(kCurrentStep) + 0.5);
+    case RankBy::parts:
+      return 100 * k.parts + k.distinct_values;
+    case RankBy::capability:
+    case RankBy::yield:
+    case RankBy::worst_case:
+      break;
+  }
+  return -k.capability;
+}
+
+double measure(const Standing& s, RankBy by) {
+  if (by == RankBy::yield) return -s.yield;
+  return by == RankBy::worst_case ? -s.worst_case_margin : measure(s.key, by);
+}
+
 int distinct_values(const PartValues& values) {
   int count = 0;
   for (std::size_t i = 0; i < values.size(); ++i) {
@@ -47,20 +90,51 @@ int distinct_values(const PartValues& values) {
   return count;
 }
 
-bool comes_before(const RankKey& a, const RankKey& b, RankBy by) {
+namespace {
+
+/// -1: a first, 1: b first, 0: what follows the measure is equal too.
+int compare_rest(const RankKey& a, const RankKey& b, RankBy by) {
   const auto order = [by](const RankKey& k) {
-    return std::tuple(leading_class(k.error, by), sensitivity_class(k.tolerance_sensitivity), error_class(k.error),
-                      k.distinct_values, k.series_sum);
+    const int sensitivity = sensitivity_class(k.tolerance_sensitivity);
+    return std::tuple(by == RankBy::yield ? -k.capability : 0.0, error_class(k.error), sensitivity, k.distinct_values,
+                      k.series_sum);
   };
   const auto ka = order(a), kb = order(b);
-  if (ka != kb) return ka < kb;
-  return a.values < b.values;
+  if (ka != kb) return ka < kb ? -1 : 1;
+  return a.values < b.values ? -1 : b.values < a.values ? 1 : 0;
 }
 
+template <class Item>
+int compare(const Item& a, const Item& b, const RankKey& ka, const RankKey& kb, RankBy by) {
+  const int la = leading_class(ka.error, by), lb = leading_class(kb.error, by);
+  if (la != lb) return la < lb ? -1 : 1;
+  const double ma = measure(a, by), mb = measure(b, by);
+  if (ma != mb) return ma < mb ? -1 : 1;
+  return compare_rest(ka, kb, by);
+}
+
+}  // namespace
+
+bool comes_before(const RankKey& a, const RankKey& b, RankBy by) { return compare(a, b, a, b, by) < 0; }
+
 bool comes_before(const Standing& a, const Standing& b, RankBy by) {
-  if (comes_before(a.key, b.key, by)) return true;
-  if (comes_before(b.key, a.key, by)) return false;
-  return std::tie(a.device, a.variant) < std::tie(b.device, b.variant);
+  const int order = compare(a, b, a.key, b.key, by);
+  return order != 0 ? order < 0 : std::tie(a.device, a.variant) < std::tie(b.device, b.variant);
+}
+
+std::vector<bool> non_dominated(const std::vector<Standing>& list) {
+  const auto costs = [](const Standing& s) {
+    return std::array<double, 4>{s.key.error, -s.key.capability, s.key.supply_current, double(s.key.parts)};
+  };
+  const auto dominates = [&](const Standing& a, const Standing& b) {
+    const auto x = costs(a), y = costs(b);
+    return x != y && std::equal(x.begin(), x.end(), y.begin(), std::less_equal<>());
+  };
+  std::vector<bool> marks;
+  for (const Standing& s : list) {
+    marks.push_back(std::none_of(list.begin(), list.end(), [&](const Standing& other) { return dominates(other, s); }));
+  }
+  return marks;
 }
 
 bool differ(const Standing& a, const Standing& b) {
@@ -92,8 +166,12 @@ std::vector<std::vector<std::string>> best_at(const std::vector<Standing>& list)
   };
   static constexpr Title kTitles[] = {
       {"most exact", [](const Standing& s) { return s.key.error; }},
+      {"most producible", [](const Standing& s) { return -s.key.capability; }},
+      {"highest yield", [](const Standing& s) { return -s.yield; }},
+      {"best worst case", [](const Standing& s) { return -s.worst_case_margin; }},
       {"least sensitive", [](const Standing& s) { return s.key.tolerance_sensitivity; }},
-      {"lowest current", [](const Standing& s) { return s.collector_current; }},
+      {"lowest current", [](const Standing& s) { return s.key.supply_current; }},
+      {"fewest parts", [](const Standing& s) { return double(s.key.parts); }},
       {"highest input resistance", [](const Standing& s) { return -s.input_resistance; }},
       {"fewest distinct values", [](const Standing& s) { return double(s.key.distinct_values); }},
       {"smallest capacitors", [](const Standing& s) { return s.total_capacitance; }},

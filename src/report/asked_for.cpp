@@ -3,6 +3,7 @@
 #include <cmath>
 
 #include "report/sections.hpp"
+#include "report/shown_assessment.hpp"
 #include "report/shown_figures.hpp"
 
 namespace bandwright {
@@ -44,6 +45,13 @@ std::string stray_text(const Stray& stray) {
   return fmt::format(
       "base {}, collector {}, collector to base {}", format_quantity(stray.input, Dimension::capacitance),
       format_quantity(stray.output, Dimension::capacitance), format_quantity(stray.feedback, Dimension::capacitance));
+}
+
+std::string assess_text(const Assess& assess) {
+  const std::string units = counted(static_cast<std::size_t>(assess.units));
+  const std::string asked = fmt::format("{} must pass; {} simulated", share_text(assess.yield, 6), units);
+  if (assess.interval == 0) return asked;
+  return fmt::format("{}, fewer once the 95 % interval is narrower than {}", asked, share_text(assess.interval, 6));
 }
 
 std::string rules_text(const PartRules& rules, Dimension dimension) {
@@ -117,6 +125,7 @@ void add_asked_for(TextSheet& sheet, const DesignResult& result) {
   lines.add("load", load_text(spec.load));
   lines.add("wiring", stray_text(spec.stray));
   lines.add("ambient", condition_text(spec.ambient, Dimension::temperature));
+  lines.add("built units", assess_text(spec.assess));
   if (result.searched) {
     lines.add("resistors", rules_text(spec.parts.resistors, Dimension::resistance));
     lines.add("capacitors", rules_text(spec.parts.capacitors, Dimension::capacitance));

@@ -25,6 +25,19 @@ std::string number(double value) { return std::isfinite(value) ? fmt::format("{}
 
 bool is_column(const FigureInfo& figure) { return figure.use != FigureUse::reserved; }
 
+// Columns that are empty where a candidate was not assessed.
+struct AssessedColumn {
+  const char* heading;
+  double (*value)(const Assessment&);
+};
+constexpr std::array kAssessed = {
+    AssessedColumn{"capability", [](const Assessment& a) { return a.capability; }},
+    AssessedColumn{"yield", [](const Assessment& a) { return a.yield.share(); }},
+    AssessedColumn{"yield_low", [](const Assessment& a) { return a.yield.low; }},
+    AssessedColumn{"yield_high", [](const Assessment& a) { return a.yield.high; }},
+    AssessedColumn{"worst_case_margin", [](const Assessment& a) { return a.worst_case_margin; }},
+};
+
 std::string record(const std::vector<std::string>& fields) {
   std::string out;
   for (const std::string& field : fields) {
@@ -39,6 +52,8 @@ std::vector<std::string> headings() {
   for (const FigureInfo& figure : figures())
     if (is_column(figure)) fields.push_back(shown_key(figure));
   for (const RoleInfo& role : roles()) fields.push_back(role.designator);
+  for (const AssessedColumn& column : kAssessed) fields.push_back(column.heading);
+  fields.push_back("non_dominated");
   return fields;
 }
 
@@ -50,6 +65,9 @@ std::vector<std::string> fields_of(const Candidate& candidate) {
   std::array<std::string, kRoleCount> values;
   for (const Part& part : candidate.parts) values[index(part.role)] = number(part.value);
   fields.insert(fields.end(), values.begin(), values.end());
+  for (const AssessedColumn& column : kAssessed)
+    fields.push_back(candidate.assessment ? number(column.value(*candidate.assessment)) : "");
+  fields.push_back(candidate.non_dominated ? "true" : "false");
   return fields;
 }
 

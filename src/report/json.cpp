@@ -2,39 +2,16 @@
 #include <bandwright/report.hpp>
 #include <bandwright/version.hpp>
 #include <cmath>
-#include <nlohmann/json.hpp>
 
+#include "report/json_assessment.hpp"
 #include "report/shown_figures.hpp"
 
 namespace bandwright {
 
 namespace {
 
-using Json = nlohmann::ordered_json;
-
 constexpr int kDocumentVersion = 1;
 constexpr const char* kNotInThisVersion = "not computed by this version";
-constexpr std::array kLaterFields = {"worst_case", "spread", "capability", "yield", "verdict"};
-
-// The notes of one candidate: those that came with it, and one for each null that is written.
-class Notes {
-public:
-  explicit Notes(const std::map<std::string, std::string>& given) : notes_(given) {}
-
-  Json number(double value, const std::string& field, const std::string& reason) {
-    if (std::isfinite(value)) return value;
-    notes_.try_emplace(field, reason);
-    return nullptr;
-  }
-  Json nothing(const std::string& field, const std::string& reason) {
-    notes_.try_emplace(field, reason);
-    return nullptr;
-  }
-  Json to_json() const { return notes_; }
-
-private:
-  std::map<std::string, std::string> notes_;
-};
 
 Json device_parameters(const Candidate& candidate, Notes& notes) {
   const BipolarParameters& p = candidate.parameters;
@@ -78,8 +55,7 @@ Json part(const Part& part, const Candidate& candidate, Notes& notes) {
   out["kind"] = resistor ? "resistor" : "capacitor";
   out["value"] = part.value;
   out["value_code"] = part.code;
-  out["series"] =
-      part.series.empty() ? notes.nothing(field + "series", "the value stands in no series") : Json(part.series);
+  out["series"] = notes.text(part.series, field + "series", "the value stands in no series");
   out["tolerance"] = {-part.tolerance.below, part.tolerance.above};
   out["family"] = part.family;
   out["power_rating"] = resistor ? notes.number(part.power_rating, field + "power_rating", beyond) : Json(nullptr);
@@ -170,23 +146,6 @@ Json shortfalls(const Candidate& candidate, Notes& notes) {
   return out;
 }
 
-Json sensitivity(const Candidate& candidate, Notes& notes) {
-  Json out = Json::object();
-  for (const FigureInfo& figure : figures()) {
-    if (!std::isfinite(candidate.analysis.figures[index(figure.figure)])) continue;
-    const auto& row = candidate.sensitivity[index(figure.figure)];
-    const std::string key = shown_key(figure);
-    Json cells = Json::object();
-    for (const Part& one : candidate.parts) {
-      const RoleInfo& role = info(one.role);
-      cells[role.designator] = notes.number(row[index(one.role)], "sensitivity." + key, "no derivative exists");
-    }
-    cells["current_gain"] = notes.number(row[kRoleCount], "sensitivity." + key, "no derivative exists");
-    out[key] = cells;
-  }
-  return out;
-}
-
 Json packages(const Candidate& candidate) {
   Json out = Json::array();
   for (const Package& one : candidate.packages)
@@ -218,8 +177,10 @@ Json candidate_document(const Candidate& candidate, const Spec& spec) {
                                               "no requirement to compare with, or a required figure has no value");
   out["margins"] = margins(candidate, spec, notes);
   out["shortfalls"] = shortfalls(candidate, notes);
-  out["sensitivity"] = sensitivity(candidate, notes);
-  for (const char* field : kLaterFields) out[field] = notes.nothing(field, kNotInThisVersion);
+  add_assessment_fields(out, candidate, spec, notes);
+  out["non_dominated"] = candidate.non_dominated;
+  add_allocation_fields(out, candidate, notes);
+  add_picture_fields(out, candidate, notes);
   out["notes"] = notes.to_json();
   return out;
 }
@@ -240,7 +201,8 @@ std::string write_json(const DesignResult& result) {
   out["spec"] = Json::parse(write_spec(result.spec));
   out["met"] = result.met;
   out["interrupted"] = result.interrupted;
-  out["ranked_by"] = result.ranked_by == RankBy::error ? "error" : "tolerance_sensitivity";
+  out["ranked_by"] = info(result.ranked_by).word;
+  out["order_reason"] = info(result.ranked_by).reason;
   out["definitions"] = result.definitions;
   out["assumptions"] = result.assumptions;
   out["from_memory"] = result.from_memory;

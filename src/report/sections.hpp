@@ -7,6 +7,9 @@
 
 namespace bandwright {
 
+/// Whether the requirements are met, and what limits the first candidate.
+void add_verdict(TextSheet& sheet, const DesignResult& result);
+
 /// Requirements and conditions as they were understood, defaults included.
 void add_asked_for(TextSheet& sheet, const DesignResult& result);
 
@@ -16,7 +19,7 @@ std::string window_text(const Requirement& requirement, const FigureInfo& figure
 /// One row a candidate; nothing where there is nothing to compare.
 void add_ranking(TextSheet& sheet, const DesignResult& result);
 
-/// Parts, figures, operating point and pole model of one candidate.
+/// Parts, figures, spread of built units, operating point and pole model of one candidate.
 void add_candidate(TextSheet& sheet, const Candidate& candidate, const Spec& spec);
 
 /// False: no operating point in the active region, and so no figures.

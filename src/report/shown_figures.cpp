@@ -24,7 +24,10 @@ std::string shown_key(const FigureInfo& figure) {
 }
 
 double shown_value(const Candidate& candidate, const FigureInfo& figure) {
-  const double value = candidate.analysis.figures[index(figure.figure)];
+  return shown_value(candidate.analysis.figures[index(figure.figure)], figure);
+}
+
+double shown_value(double value, const FigureInfo& figure) {
   return figure.dimension == Dimension::temperature ? value - kZeroCelsius : value;
 }
 
@@ -38,6 +41,11 @@ std::string figure_text(double value, const FigureInfo& figure, int digits) {
 
 std::string figure_text(const Candidate& candidate, const FigureInfo& figure, int digits) {
   return figure_text(candidate.analysis.figures[index(figure.figure)], figure, digits);
+}
+
+std::string short_family(const std::string& family, Role role) {
+  const std::string kind = info(role).kind == PartKind::resistor ? " resistor" : " capacitor";
+  return family.ends_with(kind) ? family.substr(0, family.size() - kind.size()) : family;
 }
 
 std::string tolerance_text(const Tolerance& tolerance) {

@@ -55,8 +55,11 @@ public:
       return add(where + ".value", part, "value", "a number above 0, in ohm or farad");
     if (values_[index(*role)] != 0) return add(where + ".role", part, "role", "each role once");
     values_[index(*role)] = part["value"].get<double>();
+    if (part.contains("family") && part["family"].is_string())
+      families_[index(*role)] = part["family"].get<std::string>();
   }
   const PartValues& values() const { return values_; }
+  const PartFamilies& families() const { return families_; }
   const std::vector<Fault>& faults() const { return faults_; }
 
 private:
@@ -67,6 +70,7 @@ private:
 
   std::string path_;
   PartValues values_{};
+  PartFamilies families_;
   std::vector<Fault> faults_;
 };
 
@@ -119,6 +123,7 @@ StoredCandidate read_candidate(std::string_view json, std::string_view name, int
   faults.insert(faults.end(), reader.faults().begin(), reader.faults().end());
   if (!faults.empty()) throw InputError(faults);
   stored.values = reader.values();
+  stored.families = reader.families();
   stored.has_figures = candidate.contains("figures") && candidate["figures"].is_object();
   if (stored.has_figures) stored.figures = figures_of(candidate);
   return stored;

@@ -11,30 +11,6 @@ namespace bandwright {
 
 namespace {
 
-std::string verdict_text(const DesignResult& result) {
-  const std::size_t all = result.candidates.size();
-  const auto meeting = std::count_if(result.candidates.begin(), result.candidates.end(),
-                                     [](const Candidate& c) { return c.shortfalls.empty(); });
-  if (all == 0 && result.interrupted) return "No candidate had been found yet.";
-  if (all == 0) return "No candidate: no stage meets even the conditions of a working operating point.";
-  if (all == 1 && !is_active(result.candidates.front()))
-    return "The stage does not work as an amplifier: see its notes.";
-  if (!any_requirement(result.spec)) return "Recomputed; no requirement was stated.";
-  if (meeting == 0)
-    return all == 1 ? "The candidate does not meet every requirement."
-                    : fmt::format("None of {} candidates meets every requirement; the nearest are listed.", all);
-  if (all == 1) return "The candidate meets every requirement.";
-  return fmt::format("{} of {} candidates {} every requirement.", meeting, all, meeting == 1 ? "meets" : "meet");
-}
-
-void add_verdict(TextSheet& sheet, const DesignResult& result) {
-  if (result.interrupted)
-    sheet.verdict("INTERRUPTED: the search was stopped early; this is the best it had found.", false);
-  const bool works = !result.candidates.empty() && is_active(result.candidates.front());
-  sheet.verdict(verdict_text(result), result.met && works && !result.interrupted);
-  if (!result.spec.title.empty()) sheet.paragraph(result.spec.title);
-}
-
 void add_list(TextSheet& sheet, const std::string& heading, const std::vector<std::string>& items) {
   if (items.empty()) return;
   sheet.heading(heading);

@@ -1,6 +1,7 @@
 #include "report/text_sheet.hpp"
 
 #include <algorithm>
+#include <cctype>
 
 namespace bandwright {
 
@@ -11,6 +12,7 @@ constexpr std::size_t kGap = 2;
 constexpr std::size_t kNarrowestPage = 60;
 constexpr std::size_t kHeadingCell = 12;   // longer headings are wrapped
 constexpr std::size_t kNarrowestCell = 8;  // flexible columns give way so far
+constexpr std::size_t kLongestUnit = 4;    // "kHz,"
 constexpr std::string_view kBold = "1";
 constexpr std::string_view kGreen = "1;32";
 constexpr std::string_view kYellow = "1;33";
@@ -23,29 +25,52 @@ std::string padded(const std::string& cell, std::size_t width, bool right) {
 
 void strip_trailing_spaces(std::string& line) { line.erase(line.find_last_not_of(' ') + 1); }
 
-// Widths of the columns of a grid; 0 hides a column.
-std::vector<std::size_t> column_widths(const TextGrid& grid, std::size_t page) {
-  std::vector<std::size_t> widths(grid.columns.size(), 0);
+using Widths = std::vector<std::size_t>;
+
+// What each column needs where nothing is wrapped but headings; 0 for a column without a filled cell.
+Widths natural_widths(const TextGrid& grid) {
+  Widths widths(grid.columns.size(), 0);
   for (const auto& row : grid.rows)
     for (std::size_t i = 0; i < row.size(); ++i) widths[i] = std::max(widths[i], text_width(row[i]));
-  std::size_t total = 0;
   for (std::size_t i = 0; i < widths.size(); ++i) {
     if (widths[i] == 0) continue;
     for (const auto& piece : wrap(grid.columns[i].heading, kHeadingCell))
       widths[i] = std::max(widths[i], text_width(piece));
-    total += widths[i] + kGap;
-  }
-  std::size_t surplus = total > page + kGap ? total - kGap - page : 0;
-  for (const std::size_t i : grid.flexible) {
-    const std::size_t given = std::min(surplus, widths[i] - std::min(widths[i], kNarrowestCell));
-    widths[i] -= given;
-    surplus -= given;
   }
   return widths;
 }
 
+std::size_t total_width(const Widths& widths) {
+  std::size_t total = 0;
+  for (const std::size_t width : widths) total += width > 0 ? width + kGap : 0;
+  return total > 0 ? total - kGap : 0;
+}
+
+std::size_t surplus(const Widths& widths, std::size_t page) {
+  return total_width(widths) - std::min(total_width(widths), page);
+}
+
+void narrow(const TextGrid& grid, std::size_t page, Widths& widths) {
+  for (const std::size_t i : grid.flexible)
+    widths[i] -= std::min(surplus(widths, page), widths[i] - std::min(widths[i], kNarrowestCell));
+}
+
+// Widths of the columns on a page; 0 hides a column.
+Widths column_widths(const TextGrid& grid, std::size_t page) {
+  Widths all = natural_widths(grid);
+  Widths narrowed = all;
+  narrow(grid, page, narrowed);
+  for (const std::size_t i : grid.dispensable) {
+    if (surplus(narrowed, page) == 0) break;
+    all[i] = 0;
+    narrowed = all;
+    narrow(grid, page, narrowed);
+  }
+  return narrowed;
+}
+
 // One row of cells as as many lines as its tallest cell needs.
-void append_row(const std::vector<std::string>& cells, const TextGrid& grid, const std::vector<std::size_t>& widths,
+void append_row(const std::vector<std::string>& cells, const TextGrid& grid, const Widths& widths,
                 std::vector<std::string>& lines) {
   std::vector<std::vector<std::string>> pieces;
   std::size_t height = 1;
@@ -66,6 +91,20 @@ void append_row(const std::vector<std::string>& cells, const TextGrid& grid, con
   }
 }
 
+bool is_number(std::string_view word) {
+  return !word.empty() && word.find_first_of("0123456789") != word.npos &&
+         std::isalpha(static_cast<unsigned char>(word.front())) == 0;
+}
+
+// Where the first piece of a text ends: a word, or a number with the unit behind it.
+std::size_t piece_end(std::string_view text, std::size_t width) {
+  const std::size_t end = std::min(text.find(' '), text.size());
+  if (end == text.size() || !is_number(text.substr(0, end))) return end;
+  const std::size_t with_unit = std::min(text.find(' ', end + 1), text.size());
+  const bool is_short = text_width(text.substr(end + 1, with_unit - end - 1)) <= kLongestUnit;
+  return is_short && text_width(text.substr(0, with_unit)) <= width ? with_unit : end;
+}
+
 }  // namespace
 
 std::size_t text_width(std::string_view text) {
@@ -77,7 +116,7 @@ std::vector<std::string> wrap(std::string_view text, std::size_t width) {
   std::vector<std::string> lines(1);
   std::size_t used = 0;
   while (!text.empty()) {
-    const std::size_t end = std::min(text.find(' '), text.size());
+    const std::size_t end = piece_end(text, width);
     const std::string word(text.substr(0, end));
     text.remove_prefix(std::min(end + 1, text.size()));
     if (word.empty()) continue;
@@ -128,7 +167,7 @@ void TextSheet::space() {
 
 void TextSheet::heading(const std::string& text) {
   space();
-  text_ += painted(text, kBold) + '\n';
+  for (const auto& piece : wrap(text, static_cast<std::size_t>(style_.width))) text_ += painted(piece, kBold) + '\n';
 }
 
 void TextSheet::verdict(const std::string& text, bool good) {

@@ -13,12 +13,14 @@ namespace bandwright {
 /// Characters of a UTF-8 text (every character taken as one column wide).
 std::size_t text_width(std::string_view text);
 
-/// Breaks a text at spaces into lines of at most `width` characters; a longer word stands alone.
+/// Breaks a text at spaces into lines of at most `width` characters; a longer word stands alone, a number keeps its
+/// unit.
 std::vector<std::string> wrap(std::string_view text, std::size_t width);
 
 std::string join(const std::vector<std::string>& items, std::string_view separator);
 
-/// A grid of cells. Where the rows would be wider than the page, the columns `flexible` are wrapped, first one first.
+/// A grid of cells. Where the rows would be wider than the page, the columns `flexible` are wrapped, first one first;
+/// where that is not enough, the columns `dispensable` are left out before, first one first.
 struct TextGrid {
   struct Column {
     std::string heading;
@@ -27,6 +29,7 @@ struct TextGrid {
   std::vector<Column> columns;
   std::vector<std::vector<std::string>> rows;
   std::vector<std::size_t> flexible;
+  std::vector<std::size_t> dispensable = {};
 
   void add(std::vector<std::string> cells) { rows.push_back(std::move(cells)); }
   /// Columns without a single filled cell are left out; without headings no heading line is printed.

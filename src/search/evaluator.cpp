@@ -6,6 +6,8 @@
 #include <cmath>
 
 #include "analysis/operating_point.hpp"
+#include "assessment/variance.hpp"
+#include "units/constants.hpp"
 
 namespace bandwright {
 
@@ -40,12 +42,21 @@ CauseWidths cause_widths(const DesignSpace& space, const GridPoint& point, doubl
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     if (space.has(i)) widths[i] = half_width(space.at(i, point).tolerance);
   }
-  widths[kRoleCount] = gain_half_width(space.device->parameters, collector_current);
+  widths[index(Cause::current_gain)] = gain_half_width(space.device->parameters, collector_current);
   return widths;
 }
 
-Evaluator::Evaluator(const Spec& spec, const DesignSpace& space)
-    : spec_(spec), space_(space), definition_(gain_definition(spec)), around_(surroundings(spec)) {}
+Evaluator::Evaluator(const Spec& spec, const DesignSpace& space, RankBy by)
+    : spec_(spec), space_(space), by_(by), definition_(gain_definition(spec)), around_(surroundings(spec)) {
+  Analysis anywhere;
+  anywhere.point.collector_current = anywhere.point.gain_at_zero_vce = 1;
+  anywhere.point.junction_temperature = spec.ambient.nominal;
+  units_ = population_of(spec, space.device->parameters, {}, anywhere);
+  fixed_widths_ = relative_widths(units_, spec.ambient.nominal);
+  for (const OperatingCondition& c : units_.conditions) {
+    warmest_ = std::max(warmest_, std::fabs(c.ambient - kReferenceTemperature));
+  }
+}
 
 Evaluator::Packed Evaluator::pack(const GridPoint& p) {
   Packed packed{0, 0};
@@ -109,27 +120,101 @@ double Evaluator::error(const GridPoint& point) {
   const Prepared& p = prepared(point, stage, circuit);
   if (const double over = overload(point, p.stress); over > 0) return k.error = kWorstError * (1 + over);
   const Analysis a = analyse_response(stage, circuit, p.bias, definition_);
+  k.supply_current = a.figures[index(Figure::supply_current)];
   return k.error = search_error(spec_, a, stage.parts, space_.device->parameters);
 }
 
-double Evaluator::sensitivity(const GridPoint& point) {
-  Known& k = known(point);
-  if (!std::isnan(k.sensitivity)) return k.sensitivity;
-  const Analysis a = analysis(point);
-  if (a.point.state != BiasState::active) return k.sensitivity = kWorstError;
-  const CauseWidths widths = cause_widths(space_, point, a.point.collector_current);
-  const double s = tolerance_sensitivity(spec_, bandwright::sensitivity(stage_at(point), a, definition_), widths);
-  return k.sensitivity = std::isnan(s) ? kWorstError : s;
+const std::vector<NominalBias>& Evaluator::at_conditions(const GridPoint& point, const Stage& stage,
+                                                         const OperatingPoint& nominal) {
+  if (at_conditions_.size() >= kKeptBiases) at_conditions_.clear();
+  const auto [place, is_new] = at_conditions_.try_emplace(pack(point).resistors);
+  if (!is_new) return place->second;
+  const double rise = nominal.junction_temperature - around_.ambient;
+  Circuit<double> circuit = circuit_of<double>(stage);
+  for (const OperatingCondition& c : units_.conditions) {
+    circuit.supply = c.supply;
+    place->second.push_back(bias_at(stage, circuit, c.ambient + rise, ln(nominal.collector_current)));
+  }
+  return place->second;
+}
+
+std::vector<PartValues> Evaluator::values_at_conditions(const GridPoint& point) const {
+  Population p;
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (!space_.has(i)) continue;
+    p.printed[i] = space_.at(i, point).value;
+    p.cold_loss[i] = space_.at(i, point).family->cold_loss;
+  }
+  std::vector<PartValues> list;
+  for (const OperatingCondition& c : units_.conditions) list.push_back(values_at_work(p, c.ambient));
+  return list;
+}
+
+FirstOrderSpread Evaluator::spread(const GridPoint& point, const OperatingPoint& nominal) const {
+  FirstOrderSpread s;
+  s.widths = fixed_widths_;
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (!space_.has(i)) continue;
+    const OfferedValue& part = space_.at(i, point);
+    const double t = half_width(spec_.assess.causes[i].value_or(part.tolerance));
+    const double drift = warmest_ * spec_.assess.temperature_coefficient.value_or(part.family->temperature_coefficient);
+    s.widths[i] = square_root(t * t + drift * drift);
+  }
+  if (spec_.assess.causes[index(Cause::current_gain)]) {
+    s.gain_centre = units_.spread[index(Cause::current_gain)].centre;
+  } else {
+    const auto limits = gain_limits(space_.device->parameters, nominal.collector_current);
+    s.widths[index(Cause::current_gain)] = ln(limits[1] / limits[0]) / 2;
+    s.gain_centre = ln(limits[0] * limits[1] / (nominal.gain_at_zero_vce * nominal.gain_at_zero_vce)) / 2;
+  }
+  return s;
+}
+
+Evaluator::Outlook Evaluator::outlook(const GridPoint& point) {
+  Outlook o;
+  o.analysis = analysis(point);
+  if (o.analysis.point.state != BiasState::active) return o;
+  const Stage stage = stage_at(point);
+  o.sensitivity = bandwright::sensitivity(stage, o.analysis, definition_, ResponseModel::exact, all_causes());
+  const ConditionShifts shifts =
+      condition_shifts(stage, o.analysis, units_.conditions, at_conditions(point, stage, o.analysis.point),
+                       values_at_conditions(point), definition_);
+  o.distances = limit_distances(spec_, o.analysis, o.sensitivity, spread(point, o.analysis.point), shifts);
+  return o;
+}
+
+/// Tolerance sensitivity and, where the order asks for it, the estimated capability.
+void Evaluator::look_ahead(const GridPoint& point, Known& k) {
+  const bool by_capability = wants_capability(by_);
+  Outlook o;
+  if (by_capability) {
+    o = outlook(point);
+  } else {
+    o.analysis = analysis(point);
+    o.sensitivity = bandwright::sensitivity(stage_at(point), o.analysis, definition_);
+  }
+  k.sensitivity = kWorstError;
+  k.capability = -kWorstError;
+  if (o.analysis.point.state != BiasState::active) return;
+  const CauseWidths widths = cause_widths(space_, point, o.analysis.point.collector_current);
+  const double s = tolerance_sensitivity(spec_, o.sensitivity, widths);
+  if (!std::isnan(s)) k.sensitivity = s;
+  if (by_capability) k.capability = estimated_capability(o.distances);
 }
 
 RankKey Evaluator::key(const GridPoint& point) {
   RankKey k;
   k.error = error(point);
-  k.tolerance_sensitivity = sensitivity(point);
+  Known& what = known(point);
+  if (std::isnan(what.sensitivity)) look_ahead(point, what);
+  k.tolerance_sensitivity = what.sensitivity;
+  k.capability = what.capability;
+  k.supply_current = what.supply_current;
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     if (!space_.has(i)) continue;
     const OfferedValue& v = space_.at(i, point);
     k.values[i] = v.value;
+    ++k.parts;
     k.series_sum += v.series ? v.series->number : 0;
   }
   k.distinct_values = distinct_values(k.values);

@@ -10,6 +10,7 @@
 #include <unordered_map>
 
 #include "analysis/bias_reuse.hpp"
+#include "assessment/estimate.hpp"
 #include "search/design_space.hpp"
 
 namespace bandwright {
@@ -26,12 +27,19 @@ CauseWidths cause_widths(const DesignSpace& space, const GridPoint& point, doubl
 
 class Evaluator {
 public:
-  Evaluator(const Spec& spec, const DesignSpace& space);
+  Evaluator(const Spec& spec, const DesignSpace& space, RankBy by);
 
   double error(const GridPoint& point);
-  double sensitivity(const GridPoint& point);
-  RankKey key(const GridPoint& point);  ///< with the sensitivity
+  RankKey key(const GridPoint& point);
   Analysis analysis(const GridPoint& point);
+
+  /// Distances from the limits, as estimated, and the sensitivities behind them.
+  struct Outlook {
+    Analysis analysis;
+    Sensitivity sensitivity;
+    std::vector<LimitDistance> distances;
+  };
+  Outlook outlook(const GridPoint& point);
 
   const DesignSpace& space() const { return space_; }
   std::size_t evaluations() const { return evaluations_; }  ///< analyses made, not remembered ones
@@ -50,7 +58,9 @@ private:
   };
   struct Known {
     double error = kNotComputed;
+    double supply_current = kNotComputed;
     double sensitivity = kNotComputed;
+    double capability = kNotComputed;
   };
   /// What a set of resistors decides: the operating point, and volts and watts at the highest supply.
   struct Prepared {
@@ -59,16 +69,26 @@ private:
   };
   static Packed pack(const GridPoint& point);
   const Prepared& prepared(const GridPoint& point, const Stage& stage, const Circuit<double>& circuit);
+  const std::vector<NominalBias>& at_conditions(const GridPoint& point, const Stage& stage,
+                                                const OperatingPoint& nominal);
+  void look_ahead(const GridPoint& point, Known& k);
+  FirstOrderSpread spread(const GridPoint& point, const OperatingPoint& nominal) const;
+  std::vector<PartValues> values_at_conditions(const GridPoint& point) const;
   double overload(const GridPoint& point, const Stress& stress) const;
   Stage stage_at(const GridPoint& point) const;
   Known& known(const GridPoint& point);
 
   const Spec& spec_;
   const DesignSpace& space_;
+  RankBy by_;
   GainDefinition definition_;
   Surroundings around_;
+  Population units_;            ///< conditions, and the causes that no part decides
+  CauseWidths fixed_widths_{};  ///< of these causes
+  double warmest_ = 0;          ///< K, the largest distance of an ambient from 25 °C
   std::size_t evaluations_ = 0;
   std::unordered_map<std::uint64_t, Prepared> prepared_;  // by the resistors' indices
+  std::unordered_map<std::uint64_t, std::vector<NominalBias>> at_conditions_;
   std::unordered_map<Packed, Known, Hash> known_;
 };
 

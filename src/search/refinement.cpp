@@ -104,7 +104,7 @@ void Pool::add(const Ranked& r) {
 }
 
 LocalSearch::LocalSearch(const Spec& spec, const DesignSpace& space, RankBy by, std::size_t kept)
-    : by_(by), evaluator_(spec, space), neighbourhood_(space), pool_(by, kept) {}
+    : by_(by), evaluator_(spec, space, by), neighbourhood_(space), pool_(by, kept) {}
 
 void LocalSearch::refine(const std::vector<GridPoint>& starts, const std::function<bool()>& stop) {
   for (const GridPoint& start : starts) pool_.add(neighbourhood_.refine(evaluator_, start, by_, stop));

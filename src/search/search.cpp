@@ -9,6 +9,7 @@
 #include <memory>
 #include <mutex>
 
+#include "search/centring.hpp"
 #include "search/refinement.hpp"
 #include "search/relaxation.hpp"
 #include "search/starts.hpp"
@@ -26,6 +27,11 @@ constexpr std::size_t kRefinedSpaces = 30;
 constexpr std::size_t kKickedSpaces = 8;     // of the most promising, searched on by kicks
 constexpr std::size_t kKickBudget = 400000;  // analyses, over all of them
 constexpr std::size_t kKeptOptima = 24;      // of one space
+// Where the most producible stages are sought, the most exact ones are where the centring starts.
+constexpr std::size_t kExactBudget = 120000;   // kicks that look for them
+constexpr std::size_t kCentredSpaces = 16;     // centred and refined
+constexpr std::size_t kCentredInSpace = 3;     // starts of the centring
+constexpr std::size_t kCentredBudget = 60000;  // kicks after the centring, over all spaces
 
 /// Runs tasks on TBB's threads, each writing its own slot, so that the answer does not depend on their number.
 class Workers {
@@ -130,26 +136,64 @@ void sort_by_best(LocalSearches& searches, RankBy by) {
   });
 }
 
-/// Refines the starts of every task, then spends the kicks on the spaces that came out best.
-LocalSearches search_spaces(const Spec& spec, const DesignSpaces& all, const std::vector<Task>& tasks,
-                            const SearchOptions& options, std::atomic<bool>& stop) {
+/// The part of the progress that a stage of the search makes.
+struct Span {
+  double first, last;
+  double at(double share) const { return first + (last - first) * share; }
+};
+
+/// Kicks, spent on the spaces that came out best.
+void kick_best(const Spec& spec, LocalSearches& searches, std::size_t budget, const SearchOptions& options, Span span,
+               std::atomic<bool>& stop) {
+  const std::size_t chosen = std::min(searches.size(), kKickedSpaces);
+  Workers kickers(options, span.first, span.last, chosen, stop);
+  kickers.run(
+      [&](std::size_t i) { searches[i]->kick(spec.seed + i, budget / chosen, [&] { return kickers.stopped(); }); });
+}
+
+/// Refines the starts of every task, then kicks.
+LocalSearches search_spaces(const Spec& spec, const DesignSpaces& all, const std::vector<Task>& tasks, RankBy by,
+                            std::size_t budget, const SearchOptions& options, Span span, std::atomic<bool>& stop) {
   LocalSearches searches;
   for (const Task& t : tasks) {
-    searches.push_back(std::make_unique<LocalSearch>(spec, all.spaces[t.space], options.rank_by, kKeptOptima));
+    searches.push_back(std::make_unique<LocalSearch>(spec, all.spaces[t.space], by, kKeptOptima));
   }
-  Workers refiners(options, 0.2, 0.4, tasks.size(), stop);
+  Workers refiners(options, span.first, span.at(0.25), tasks.size(), stop);
   const auto refine = [&](std::size_t i) { searches[i]->refine(tasks[i].starts, [&] { return refiners.stopped(); }); };
   refiners.run(refine);
   // once the caller has stopped the search, what is at hand is snapped and returned as it is
   for (std::size_t i = 0; i < tasks.size(); ++i) {
     if (searches[i]->optima().empty()) refine(i);
   }
-  sort_by_best(searches, options.rank_by);
-  const std::size_t chosen = std::min(searches.size(), kKickedSpaces);
-  Workers kickers(options, 0.4, 1.0, chosen, stop);
-  kickers.run([&](std::size_t i) {
-    searches[i]->kick(spec.seed + i, kKickBudget / chosen, [&] { return kickers.stopped(); });
-  });
+  sort_by_best(searches, by);
+  kick_best(spec, searches, budget, options, {span.at(0.25), span.last}, stop);
+  sort_by_best(searches, by);
+  return searches;
+}
+
+/// Centres the best of each space and refines what comes out, in the order that is asked for.
+LocalSearches centre_spaces(const Spec& spec, const LocalSearches& exact, const SearchOptions& options, Span span,
+                            std::atomic<bool>& stop) {
+  LocalSearches searches;
+  const RankBy by = options.rank_by;
+  for (std::size_t i = 0; i < std::min(exact.size(), kCentredSpaces); ++i) {
+    searches.push_back(std::make_unique<LocalSearch>(spec, exact[i]->evaluator().space(), by, kKeptOptima));
+  }
+  Workers workers(options, span.first, span.at(0.5), searches.size(), stop);
+  const auto centre = [&](std::size_t i) {
+    std::vector<GridPoint> starts;
+    for (const Ranked& r : exact[i]->optima()) {
+      if (starts.size() == kCentredInSpace) break;
+      starts.push_back(workers.stopped() ? r.point : centred(spec, searches[i]->evaluator(), r.point, by));
+    }
+    searches[i]->refine(starts, [&] { return workers.stopped(); });
+  };
+  workers.run(centre);
+  for (std::size_t i = 0; i < searches.size(); ++i) {
+    if (searches[i]->optima().empty()) centre(i);
+  }
+  sort_by_best(searches, by);
+  kick_best(spec, searches, kCentredBudget, options, {span.at(0.5), span.last}, stop);
   return searches;
 }
 
@@ -168,6 +212,21 @@ Found found_from(Evaluator& evaluator, const Ranked& r) {
   f.standing.input_resistance = a.figures[index(Figure::input_resistance)];
   for (std::size_t i = kResistorRoles; i < kRoleCount; ++i) f.standing.total_capacitance += r.key.values[i];
   return f;
+}
+
+/// The one with the smallest error, with its key in the order that is asked for.
+Found most_exact(const Spec& spec, const LocalSearches& searches, RankBy by) {
+  const Ranked* best = nullptr;
+  const DesignSpace* space = nullptr;
+  for (const auto& s : searches) {
+    for (const Ranked& r : s->optima()) {
+      if (best != nullptr && r.key.error >= best->key.error) continue;
+      best = &r;
+      space = &s->evaluator().space();
+    }
+  }
+  Evaluator evaluator(spec, *space, by);
+  return found_from(evaluator, {best->point, evaluator.key(best->point)});
 }
 
 std::string describe_miss(const Found& f, const DesignSpaces& all, const Spec& spec) {
@@ -193,9 +252,17 @@ SearchOutcome search(const Spec& spec, const Catalogue& catalogue, const std::ve
                      const SearchOptions& options) {
   const DesignSpaces all = design_spaces(spec, catalogue, devices);
   std::atomic<bool> stop{false};
-  const std::vector<Task> tasks = plan(relax_all(spec, all, options, stop), all, options.rank_by);
-  const LocalSearches searches = search_spaces(spec, all, tasks, options, stop);
+  const bool centring = wants_capability(options.rank_by);
+  const RankBy first_by = centring ? RankBy::error : options.rank_by;
+  const std::vector<Task> tasks = plan(relax_all(spec, all, options, stop), all, first_by);
+  LocalSearches searches = search_spaces(spec, all, tasks, first_by, centring ? kExactBudget : kKickBudget, options,
+                                         {0.2, centring ? 0.5 : 1.0}, stop);
   std::vector<Found> found;
+  if (centring && !searches.empty()) {
+    LocalSearches centred_searches = centre_spaces(spec, searches, options, {0.5, 1.0}, stop);
+    found.push_back(most_exact(spec, searches, options.rank_by));
+    searches = std::move(centred_searches);
+  }
   for (const auto& s : searches) {
     for (const Ranked& r : s->optima()) found.push_back(found_from(s->evaluator(), r));
   }

@@ -115,7 +115,7 @@ PartValues start_point(const Spec& spec, const DesignSpace& space, const Choices
   v[index(Role::emitter_bypassed)] = r.emitter;
   v[index(Role::bypass)] = 1;  // any: shorts in the midband network
 
-  const Bipolar<double> warm = at_temperature(device, stage.around.ambient, 1.0);
+  const Bipolar<double> warm = at_temperature(device, stage.around.ambient);
   const double beta = e_to(gain_point(device.gain, ln(w.collector_current)).log_gain + warm.log_gain_shift);
   const double v_ce = w.supply - w.collector_drop - w.emitter_voltage;
   const HybridPi<double> h = hybrid_pi(warm, w.collector_current, w.base_emitter_voltage, v_ce, beta);

@@ -14,7 +14,7 @@ namespace {
 
 std::vector<Field> all_fields() {
   std::vector<Field> rows;
-  for (auto group : {circuit_fields, requirement_fields, part_fields, search_fields, later_fields}) {
+  for (auto group : {circuit_fields, requirement_fields, part_fields, search_fields, assess_fields, later_fields}) {
     std::vector<Field> more = group();
     std::move(more.begin(), more.end(), std::back_inserter(rows));
   }
@@ -91,8 +91,10 @@ std::string option_of(std::string_view path) {
 std::string describe_range(const Field& field) {
   const auto [low, high] = field.allowed;
   if (field.shape == Shape::count) return fmt::format("from {:.0f} to {:.0f}", low, high);
-  if (field.shape == Shape::tolerance) return fmt::format("from {} to {}", percent(low), percent(high));
+  const bool is_share = field.shape == Shape::quantity && field.dimension == Dimension::fraction;
+  if (is_share || field.shape == Shape::tolerance) return fmt::format("from {} to {}", percent(low), percent(high));
   if (field.shape == Shape::difference) return fmt::format("from {:.6g} K to {:.6g} K", low, high);
+  if (field.shape == Shape::per_kelvin) return fmt::format("from {:.6g} to {:.6g} ppm/K", 1e6 * low, 1e6 * high);
   return fmt::format("from {} to {}", format_quantity(low, field.dimension), format_quantity(high, field.dimension));
 }
 

@@ -20,13 +20,14 @@ enum class Shape {
   text,
   word,        ///< one of Field::words
   names,       ///< a list of text; comma separated on the command line
-  quantity,    ///< a number or text, of Field::dimension; or Field::word_for_limit
+  quantity,    ///< a number or text, of Field::dimension
   tolerance,   ///< relative, of a quantity of Field::dimension
   difference,  ///< of temperatures
+  per_kelvin,  ///< a share for each kelvin
   count,       ///< a whole number
   flag,
   range,  ///< [min, max]; "min:max" on the command line
-  roles,  ///< an object with one field a role; "role=value,..." on the command line
+  keyed,  ///< an object with one field a role or cause; "role=value,..." on the command line
 };
 
 /// A value as read, before it is stored.
@@ -72,7 +73,8 @@ struct Field {
   std::string help{};                           ///< what it is
   std::string usual{};                          ///< the default in words; empty: none
   std::vector<std::string> words{};
-  std::string word_for_limit{};  ///< "open", "absent": a word in place of the number `limit`
+  std::string key_noun{};        ///< what the keys of a keyed object are: "role"
+  std::string word_for_limit{};  ///< "open", "absent", "off": a word in place of the number `limit`, of any shape
   double limit = 0;
   bool bare = false;    ///< the value that stands for the whole object: "supply": "12 V"
   bool direct = false;  ///< a DC voltage: no peak-to-peak, no rms

@@ -98,7 +98,7 @@ Field capacitor_families() {
   return {.path = "parts.capacitors.families",
           .option = "capacitors-families",
           .shape = Shape::names,
-          .help = "capacitors: families of the catalogue, in order of preference",
+          .help = "capacitors: families of the catalogue, each offered at every value it is made in",
           .usual = "the catalogue's first choices",
           .store = [](Draft& draft, const Reading& reading) { draft.spec.parts.capacitors.families = reading.names; },
           .show =
@@ -114,7 +114,7 @@ std::vector<Field> rules_of(const Kind& kind) {
 }
 
 Field by_role(const char* path, const char* help) {
-  return {.path = path, .option = option_of(path), .shape = Shape::roles, .help = help};
+  return {.path = path, .option = option_of(path), .shape = Shape::keyed, .help = help, .key_noun = "role"};
 }
 
 Field range_of(const RoleInfo& role) {

@@ -84,12 +84,7 @@ std::vector<Field> later_fields() {
   const auto number = [](double value) { return [=](const Reading& reading) { return reading.number == value; }; };
   return {later("parts.stock", Shape::text, "", [](const Reading&) { return false; }),
           later("parts.stock_only", Shape::flag, "false", number(0)),
-          later("parts.pairs", Shape::flag, "false", number(0)),
-          later("parts.boards", Shape::count, "1", number(1)),
-          later("assess.units", Shape::count, "20000", number(20000)),
-          later("assess.yield", Shape::quantity, "99 %", number(0.99)),
-          later("assess.interval", Shape::quantity, "0.5 %", number(0.005)),
-          later("assess.distribution", Shape::text, "normal", [](const Reading& r) { return r.text == "normal"; })};
+          later("parts.pairs", Shape::flag, "false", number(0)), later("parts.boards", Shape::count, "1", number(1))};
 }
 
 }  // namespace bandwright

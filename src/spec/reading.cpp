@@ -94,14 +94,7 @@ bool read_one_quantity(const Field& field, const Json& value, Reading& reading, 
 }
 
 bool read_quantity_field(const Field& field, const Json& value, Reading& reading, Objection& objection) {
-  if (!field.word_for_limit.empty() && value == Json(field.word_for_limit)) {
-    reading.number = field.limit;
-    return true;
-  }
-  if (!read_one_quantity(field, value, reading, objection)) {
-    if (!field.word_for_limit.empty()) objection.expected += ", or " + field.word_for_limit;
-    return false;
-  }
+  if (!read_one_quantity(field, value, reading, objection)) return false;
   return in_range(reading.number, field.allowed) || out_of_range(field, objection);
 }
 
@@ -141,6 +134,15 @@ bool read_difference(const Field& field, const Json& value, Reading& reading, Ob
   return in_range(reading.number, field.allowed) || out_of_range(field, objection);
 }
 
+// A bare number is SI: 1/K.
+bool read_per_kelvin_field(const Field& field, const Json& value, Reading& reading, Objection& objection) {
+  const std::string text = value.is_string() ? value.get<std::string>() : "";
+  const auto share = value.is_number() ? value.get<double>() : read_per_kelvin(text, objection.expected);
+  if (!share) return false;
+  reading.number = *share;
+  return in_range(reading.number, field.allowed) || out_of_range(field, objection);
+}
+
 std::optional<double> whole_number(const Json& value) {
   if (value.is_number()) {
     const auto number = value.get<double>();
@@ -170,8 +172,8 @@ bool read_flag(const Field&, const Json& value, Reading& reading, Objection& obj
   return true;
 }
 
-bool read_roles(const Field&, const Json&, Reading&, Objection& objection) {
-  return object_to(objection, "an object of role and value");
+bool read_keyed(const Field& field, const Json&, Reading&, Objection& objection) {
+  return object_to(objection, fmt::format("an object of {} and value", field.key_noun));
 }
 
 struct Reader {
@@ -185,11 +187,31 @@ constexpr std::array kReaders = {
     Reader{Shape::quantity, read_quantity_field},
     Reader{Shape::tolerance, read_tolerance_field},
     Reader{Shape::difference, read_difference},
+    Reader{Shape::per_kelvin, read_per_kelvin_field},
     Reader{Shape::count, read_count},
     Reader{Shape::flag, read_flag},
     Reader{Shape::range, read_range},
-    Reader{Shape::roles, read_roles},
+    Reader{Shape::keyed, read_keyed},
 };
+
+bool read_limit(const Field& field, const Json& value, Reading& reading) {
+  if (field.word_for_limit.empty() || value != Json(field.word_for_limit)) return false;
+  reading.number = field.limit;
+  reading.tolerance = {{field.limit, field.limit}, false};
+  return true;
+}
+
+bool read_shape(const Field& field, const Json& value, Reading& reading, Objection& objection) {
+  for (const Reader& reader : kReaders)
+    if (reader.shape == field.shape) return reader.read(field, value, reading, objection);
+  return false;
+}
+
+// The command line knows text only: a number alone is one.
+Json number_or_text(const std::string& text) {
+  const Json number = Json::parse(text, nullptr, false);
+  return number.is_number() ? number : Json(text);
+}
 
 Json pair_of(const std::string& text) {
   const std::size_t colon = text.find(':');
@@ -201,8 +223,10 @@ Json pair_of(const std::string& text) {
 
 std::optional<Reading> read_value(const Field& field, const Json& value, Objection& objection) {
   Reading reading;
-  for (const Reader& reader : kReaders)
-    if (reader.shape == field.shape && !reader.read(field, value, reading, objection)) return std::nullopt;
+  if (!read_limit(field, value, reading) && !read_shape(field, value, reading, objection)) {
+    if (!field.word_for_limit.empty()) objection.expected += ", or " + field.word_for_limit;
+    return std::nullopt;
+  }
   objection = {};
   if (field.refuse) objection.expected = field.refuse(reading);
   if (!objection.expected.empty()) return std::nullopt;
@@ -223,6 +247,7 @@ std::vector<std::string> comma_separated(const std::string& text) {
 Json command_line_value(const Field& field, const std::string& text) {
   if (field.shape == Shape::names) return comma_separated(text);
   if (field.shape == Shape::range) return pair_of(text);
+  if (field.shape == Shape::per_kelvin) return number_or_text(text);
   return text;
 }
 

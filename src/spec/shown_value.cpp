@@ -10,7 +10,6 @@
 
 #include "units/constants.hpp"
 #include "units/number_text.hpp"
-#include "units/quantity_text.hpp"
 
 namespace bandwright {
 
@@ -36,11 +35,23 @@ std::string shortest(double guess, const std::function<bool(const std::string&)>
   return fmt::format("{}", guess);
 }
 
+// The shortest decimal of a number times ten to `power`, not rounded again: 1.28 and 2 give "1.28e2".
+std::string moved(double value, int power) {
+  constexpr int kDigits = std::numeric_limits<double>::max_digits10 - 1;  // behind the point
+  std::string text = fmt::format("{:.0e}", value);
+  for (int digits = 1; digits <= kDigits && number_of(text) != value; ++digits)
+    text = fmt::format("{:.{}e}", value, digits);
+  const std::size_t e = text.find('e');
+  return fmt::format("{}e{}", text.substr(0, e), std::stoi(text.substr(e + 1)) + power);
+}
+
 std::string percentage(double share) {
-  return shortest(100 * share, [&](const std::string& text) {
+  const auto same = [&](const std::string& text) {
     std::string_view rest = text;
     return scaled(take_number(rest), -2) == share;
-  });
+  };
+  const std::string text = shortest(100 * share, same);
+  return same(text) ? text : moved(share, 2);
 }
 
 }  // namespace
@@ -60,11 +71,7 @@ Json shown_load(double conductance) {
 
 Json shown_tolerance(const Tolerance& tolerance) {
   if (tolerance.below == tolerance.above) return tolerance.above;
-  std::string unused;
-  const std::string percent = fmt::format("-{}/+{} %", percentage(tolerance.below), percentage(tolerance.above));
-  const auto again = read_tolerance(percent, Dimension::resistance, unused);
-  if (again && again->value == tolerance) return percent;
-  return fmt::format("-{}/+{}", tolerance.below, tolerance.above);
+  return fmt::format("-{}/+{} %", percentage(tolerance.below), percentage(tolerance.above));
 }
 
 }  // namespace bandwright

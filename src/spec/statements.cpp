@@ -50,6 +50,14 @@ std::string known_elsewhere(const std::string& parent, const std::string& key) {
   return find_figure(key) ? "it inside \"requirements\"" : "";
 }
 
+// The nearest key of the object, or the one that a designator or symbol stands for.
+std::string suggested_key(const std::string& parent, const std::string& written) {
+  const std::string nearest = nearest_name(written, members(parent));
+  const auto cause = find_cause(written);  // roles are causes too
+  if (!nearest.empty() || !cause || !find_field(joined(parent, info(*cause).key))) return nearest;
+  return info(*cause).key;
+}
+
 // "noise-figure-max" gives "noise_figure".
 std::string figure_key_of(std::string option) {
   for (const std::string_view end : {"-min", "-max", "-tolerance"})
@@ -100,7 +108,7 @@ void Statements::take_document(const Json& spec, const std::string& prefix) {
 void Statements::walk(const Json& node, const std::string& path) {
   touched_.insert(path);
   const Field* field = find_field(path);
-  if (field && field->shape != Shape::roles) return state(path, {prefix_ + path, node});
+  if (field && field->shape != Shape::keyed) return state(path, {prefix_ + path, node});
   if (node.is_object()) return walk_members(node, path);
   if (const Field* bare = bare_field(path)) return state(bare->path, {prefix_ + path, node});
   object_at(path, {prefix_ + path, found_text(node), "an object with " + list_of(members(path)), ""});
@@ -131,9 +139,7 @@ void Statements::unknown_key(const std::string& parent, const std::string& key, 
   touched_.insert(path);
   const std::string elsewhere = known_elsewhere(parent, key);
   if (!elsewhere.empty()) return object_at(path, {where, found_text(value), elsewhere, ""});
-  std::string suggestion = nearest_name(key, members(parent));
-  if (const auto role = find_role(key); role && suggestion.empty() && find_field(joined(parent, info(*role).key)))
-    suggestion = info(*role).key;
+  const std::string suggestion = suggested_key(parent, key);
   object_at(path, {where, key, "one of the keys " + list_of(members(parent)), suggestion});
   if (!suggestion.empty()) spoil_under(joined(parent, suggestion));
 }
@@ -149,7 +155,7 @@ void Statements::take_override(const Override& given) {
   if (!field) return unknown_option(option, text);
   if (!given_options_.insert(option).second) return object_at(field->path, {where, text, "this option once", ""});
   if (!is_utf8(text)) return object_at(field->path, {where, text, "text in UTF-8", ""});
-  if (field->shape == Shape::roles) return take_roles(*field, given);
+  if (field->shape == Shape::keyed) return take_keyed(*field, given);
   state(field->path, {where, command_line_value(*field, text)});
 }
 
@@ -162,21 +168,21 @@ void Statements::unknown_option(const std::string& option, const std::string& te
 }
 
 // "collector=4k7,shunt=absent"
-void Statements::take_roles(const Field& field, const Override& given) {
+void Statements::take_keyed(const Field& field, const Override& given) {
   const std::string where = "--" + given.first;
   for (const std::string& item : comma_separated(given.second)) {
     const std::size_t equals = item.find('=');
     if (equals == std::string::npos) {
-      object_at(field.path, {where, item, "role=value, several between commas", ""});
+      object_at(field.path, {where, item, field.key_noun + "=value, several between commas", ""});
       continue;
     }
-    const std::string role = item.substr(0, equals);
-    const Field* row = find_field(field.path + "." + role);
+    const std::string key = item.substr(0, equals);
+    const Field* row = find_field(joined(field.path, key));
     if (row)
-      state(row->path, {where + " " + role, command_line_value(*row, item.substr(equals + 1))});
+      state(row->path, {where + " " + key, command_line_value(*row, item.substr(equals + 1))});
     else
-      object_at(field.path, {where, role, "one of the roles " + list_of(members(field.path)),
-                             nearest_name(role, members(field.path))});
+      object_at(field.path, {where, key, "one of the " + field.key_noun + "s " + list_of(members(field.path)),
+                             suggested_key(field.path, key)});
   }
 }
 

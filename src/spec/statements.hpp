@@ -41,7 +41,7 @@ private:
   void walk_members(const Json& node, const std::string& path);
   void unknown_key(const std::string& parent, const std::string& key, const Json& value);
   void take_override(const Override& given);
-  void take_roles(const Field& field, const Override& given);
+  void take_keyed(const Field& field, const Override& given);
   void unknown_option(const std::string& option, const std::string& text);
   void state(const std::string& path, Statement statement);
   void spoil_under(const std::string& path);

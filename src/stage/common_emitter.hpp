@@ -64,7 +64,7 @@ BiasTrial<T> bias_trial(const Circuit<T>& c, const Bipolar<T>& device, const T& 
   const T v_th = c.supply * r2 / (r1 + r2);
   const T r_e = c[Role::emitter] + c[Role::emitter_bypassed];
   const T r_ce = c[Role::collector] + r_e;
-  const T g_a(device.sheet->inverse_early_voltage);
+  const T& g_a = device.inverse_early_voltage;
 
   const GainPoint<T> curve = gain_point(device.sheet->gain, log_i_c);
   BiasTrial<T> t;

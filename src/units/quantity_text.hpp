@@ -22,4 +22,7 @@ std::string describe_tolerance(Dimension of);
 /// A difference of temperatures, kelvin: "10 K", "10 °C". Never negative.
 std::optional<double> read_temperature_difference(std::string_view text, std::string& expected);
 
+/// A two-sided share for each kelvin, 1/K: "50 ppm/K", "±50 ppm/K", "0.5 %/K". Never negative.
+std::optional<double> read_per_kelvin(std::string_view text, std::string& expected);
+
 }  // namespace bandwright

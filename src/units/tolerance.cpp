@@ -1,6 +1,7 @@
-// Relative tolerances: "5 %", "0.05", "-20/+50 %", "1 dB".
+// Relative tolerances: "5 %", "0.05", "-20/+50 %", "1 dB"; and for each kelvin: "50 ppm/K".
 #include <fmt/format.h>
 
+#include <array>
 #include <bandwright/quantity.hpp>
 #include <utility>
 
@@ -67,13 +68,15 @@ std::optional<WrittenTolerance> pair(std::string_view text, std::string& reason)
   return WrittenTolerance{{*below, *above}, true};
 }
 
-std::optional<WrittenTolerance> symmetric(std::string_view text, std::string& reason) {
+// What stands behind "±", or the text itself.
+std::string_view without_plus_minus(std::string_view text) {
   for (const std::string_view sign : {std::string_view(kPlusMinus), std::string_view("+/-"), std::string_view("+-")})
-    if (text.starts_with(sign)) {
-      text.remove_prefix(sign.size());
-      break;
-    }
-  const auto both = share(text, false, reason);
+    if (text.starts_with(sign)) return trimmed(text.substr(sign.size()));
+  return text;
+}
+
+std::optional<WrittenTolerance> symmetric(std::string_view text, std::string& reason) {
+  const auto both = share(without_plus_minus(text), false, reason);
   if (!both) return std::nullopt;
   return WrittenTolerance{{*both, *both}, false};
 }
@@ -83,6 +86,15 @@ std::optional<WrittenTolerance> read_spelt(std::string_view text, Dimension of, 
   if (text.ends_with("dB") && read_quantity(text, Dimension::decibel, unused)) return decibels(text, of, reason);
   if (text.find('/') != std::string_view::npos && !text.starts_with("+/-")) return pair(text, reason);
   return symmetric(text, reason);
+}
+
+// Shares for each kelvin, and their powers of ten.
+constexpr std::array kPerKelvin = {std::pair{"ppm/K", -6}, std::pair{"%/K", -2}, std::pair{"1/K", 0}};
+
+std::optional<int> per_kelvin_power(std::string_view unit) {
+  for (const auto& [text, power] : kPerKelvin)
+    if (unit == text) return power;
+  return std::nullopt;
 }
 
 }  // namespace
@@ -101,6 +113,17 @@ std::optional<WrittenTolerance> read_tolerance(std::string_view text, Dimension 
   }
   if (!tolerance) expected = spelt.empty() ? describe_tolerance(of) : describe_tolerance(of) + " (" + reason + ")";
   return tolerance;
+}
+
+std::optional<double> read_per_kelvin(std::string_view text, std::string& expected) {
+  const std::string spelt = one_spelling(text);
+  std::string_view rest = without_plus_minus(spelt);
+  const NumberText number = take_number(rest);
+  const auto power = per_kelvin_power(trimmed(rest));
+  const auto share = power && !number.digits.empty() ? scaled(number, *power) : std::nullopt;
+  if (share && *share >= 0) return share;
+  expected = "a share for each kelvin such as 50 ppm/K or 0.5 %/K";
+  return std::nullopt;
 }
 
 Tolerance parse_tolerance(std::string_view text, Dimension of) {

@@ -72,6 +72,8 @@ std::vector<Wrong> wrong_command_lines() {
       {design({"--source-resistance", "-600"}), "source"},
       {design({"--load-capacitance", "10"}), "10"},
       {design({"--ambient", "25"}), "ambient"},
+      {design({"--assess-units", "10"}), "a whole number from 100 to 10000000"},
+      {design({"--assess-causes", "curent_gain=off"}), "did you mean \"current_gain\"?"},
       {{"check"}, "nothing to check"},
       {{"check", "--device", "BC547B"}, "supply"},
       {{"check", "--supply", "12V", "--device", "BC547B"}, "--upper-divider is missing"},
@@ -136,6 +138,14 @@ TEST_CASE("a negative value is a value, not an option") {
                                           "20kHz", "--supply", "-12V", "--print-spec"});
   CHECK(outcome.status == 0);
   CHECK_THAT(outcome.out, ContainsSubstring("-12"));
+}
+
+TEST_CASE("causes of variation are switched off and limited on the command line") {
+  const Outcome outcome =
+      design_easy({"--print-spec", "--assess-units=1000", "--assess-causes", "current_gain=off,collector=-20/+50%"});
+  CHECK(outcome.status == 0);
+  for (const char* written : {R"("units": 1000)", R"("current_gain": "off")", R"("collector": "-20/+50 %")"})
+    CHECK_THAT(outcome.out, ContainsSubstring(written));
 }
 
 TEST_CASE("options may come before the operand, with = or a space, and -- ends them") {

@@ -24,8 +24,9 @@ struct HeaderRoom {
   const char* room;
 };
 constexpr std::array kHeaderRooms{
-    HeaderRoom{"fault", "units"}, HeaderRoom{"quantity", "units"}, HeaderRoom{"version", "units"},
-    HeaderRoom{"role", "spec"},   HeaderRoom{"figure", "spec"},
+    HeaderRoom{"fault", "units"},         HeaderRoom{"quantity", "units"}, HeaderRoom{"version", "units"},
+    HeaderRoom{"role", "spec"},           HeaderRoom{"figure", "spec"},    HeaderRoom{"cause", "spec"},
+    HeaderRoom{"population", "analysis"},
 };
 
 /// Where headers from outside the language's own library may be included: beginnings of paths, parted by spaces.
@@ -34,15 +35,16 @@ struct Home {
   const char* homes;
 };
 constexpr std::array kHomes{
-    Home{"nlopt", "src/search/"},
+    Home{"nlopt", "src/assessment/ src/search/"},
     Home{"nlohmann/", "src/spec/ src/catalogue/ src/report/json src/report/stored_result"},
     Home{"boost/program_options", "src/cli/"},
     Home{"boost/", "src/"},
     Home{"Eigen/", "src/analysis/"},
     Home{"unsupported/Eigen/", "src/analysis/"},
-    Home{"tbb/", "src/search/ src/design."},
-    Home{"oneapi/tbb", "src/search/ src/design."},
-    Home{"execution", "src/search/ src/design."},  // the standard library hands its parallel algorithms to oneTBB
+    Home{"tbb/", "src/search/ src/design. src/finalists."},
+    Home{"oneapi/tbb", "src/search/ src/design. src/finalists."},
+    Home{"execution",
+         "src/search/ src/design. src/finalists."},  // the standard library hands its parallel algorithms to oneTBB
     Home{"fmt/", "src/"},
     Home{"immintrin.h", "src/kernel/"},
     Home{"sys/", "src/cli/"},

@@ -38,7 +38,7 @@ const Planted kPlanted[] = {
     {"src/report/planted.cpp", "#include \"planted.hpp\"\n", "room/file.hpp"},
     {"src/report/planted.cpp", "#include \"../units/planted.hpp\"\n", "leaves its folder"},
     {"src/report/planted.cpp", "#include PLANTED\n", "computed include"},
-    {"src/analysis/planted.cpp", "#include <nlopt.hpp>\n", "its home is src/search/"},
+    {"src/analysis/planted.cpp", "#include <nlopt.hpp>\n", "its home is src/assessment/"},
     {"src/analysis/planted.cpp", "#include <nlohmann/json.hpp>\n", "its home is src/spec/"},
     {"src/report/table.cpp", "#include <nlohmann/json.hpp>\n", "its home is src/spec/"},
     {"src/report/planted.cpp", "#include <boost/program_options.hpp>\n", "its home is src/cli/"},

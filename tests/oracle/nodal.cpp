@@ -21,6 +21,8 @@ constexpr Real kLimit = 1e20L;                          // Hz: |H| stands at its
 constexpr Real kTie = 1e-9L;                            // of the definition of the midband gain
 constexpr int kBisections = 42;                         // 0.096 in ln f down to 2e-14
 constexpr int kGoldenSteps = 44;                        // 0.19 in ln f down to 1e-10: |H| is flat there to 1e-20
+constexpr int kNearbySteps = 26;                        // 0.02 in ln f down to 7e-8: flat to 1e-14
+constexpr Real kStands = 1e-12L;                        // in ln f: the next step would vanish
 
 enum class Fate { as_it_is, shorted, opened };
 
@@ -89,11 +91,11 @@ Real log_frequency(int point) { return std::log(kScanBottom) + point * std::numb
 Real at_log(const Network& net, Real log_f) { return magnitude(net, std::exp(log_f)); }
 
 /// Largest |H| between two log frequencies that enclose one peak, by golden section.
-std::pair<Real, Real> refine_peak(const Network& net, Real low, Real high) {
+std::pair<Real, Real> refine_peak(const Network& net, Real low, Real high, int steps = kGoldenSteps) {
   constexpr Real kGolden = 0.618033988749894848L;
   Real x1 = high - kGolden * (high - low), x2 = low + kGolden * (high - low);
   Real y1 = at_log(net, x1), y2 = at_log(net, x2);
-  for (int step = 0; step < kGoldenSteps; ++step) {
+  for (int step = 0; step < steps; ++step) {
     if (y1 >= y2) {
       high = x2, x2 = x1, y2 = y1;
       x1 = high - kGolden * (high - low), y1 = at_log(net, x1);
@@ -112,6 +114,30 @@ Real bisect(const Network& net, Real level, Real above, Real under) {
     (at_log(net, middle) >= level ? above : under) = middle;
   }
   return (above + under) / 2;
+}
+
+/// The same over a short way, on which ln|H| is about straight: false position, the end that stays twice at half
+/// weight.
+Real false_position(const Network& net, Real level, Real above, Real under) {
+  const auto excess = [&](Real x) { return std::log(at_log(net, x) / level); };
+  Real e_above = excess(above), e_under = excess(under), x = above;
+  if (!(e_above >= 0 && e_under < 0)) return NAN;
+  for (int step = 0, stayed = 0; step < kBisections; ++step) {
+    const Real before = x;
+    x = (above * e_under - under * e_above) / (e_under - e_above);
+    if (std::abs(x - before) < kStands) break;
+    const Real e = excess(x);
+    if (e >= 0) {
+      above = x, e_above = e;
+      if (stayed > 0) e_under /= 2;
+      stayed = 1;
+    } else {
+      under = x, e_under = e;
+      if (stayed < 0) e_above /= 2;
+      stayed = -1;
+    }
+  }
+  return x;
 }
 
 Real slope(const Network& net, Real log_f) {
@@ -203,11 +229,12 @@ Edges edges_near(const Network& net, const Edges& near, Real at) {
   else if (near.rises_to_the_end)
     result.gain = magnitude_in_fifty_digits(net, output, kLimit);
   else
-    result.gain = refine_peak(net, std::log(near.reference) - kAround, std::log(near.reference) + kAround).second;
+    result.gain =
+        refine_peak(net, std::log(near.reference) - kAround, std::log(near.reference) + kAround, kNearbySteps).second;
   const Real level = result.gain / std::numbers::sqrt2_v<Real>;
   const auto again = [&](const std::optional<Real>& edge, Real inwards) -> std::optional<Real> {
     if (!edge) return std::nullopt;
-    return std::exp(bisect(net, level, std::log(*edge) + inwards, std::log(*edge) - inwards));
+    return std::exp(false_position(net, level, std::log(*edge) + inwards, std::log(*edge) - inwards));
   };
   result.lower = again(near.lower, kAround);
   result.upper = again(near.upper, -kAround);

@@ -32,6 +32,19 @@ bandwright::GainCurve random_curve(Dice& dice) {
   return curve;
 }
 
+/// fT as if it were published at 10 mA with 5 V across the collector junction. Where tauF is 0, fT and the capacitances
+/// give less than 0.
+void publish_transition(BipolarParameters& q) {
+  constexpr double kEmitterResistance = 2.5693;  // ohm: VT at 25 °C over 10 mA
+  constexpr double kReverse = 5;                 // V
+  q.emitter_charging = kEmitterResistance * q.emitter_capacitance;
+  q.feedback_charging =
+      kEmitterResistance * q.feedback_capacitance * std::pow(1 + kReverse / q.built_in_potential, -q.grading_exponent);
+  const double charging = q.emitter_charging + q.feedback_charging;
+  q.transit_deficit = q.transit_time > 0 ? 0 : charging / 2;
+  q.transit_delay = q.transit_time + charging - q.transit_deficit;
+}
+
 /// A transistor that no maker sells: the ends of every parameter, and the zeros.
 BipolarParameters random_device(Dice& dice) {
   BipolarParameters q;
@@ -39,12 +52,14 @@ BipolarParameters random_device(Dice& dice) {
   q.pnp = dice.chance(0.3);
   q.gain = q.gain_min = q.gain_max = random_curve(dice);
   const double v_be = dice.between(0.5, 0.8);
+  q.base_emitter_voltage = v_be;
   q.log_saturation_current = std::log(1e-3) - v_be / 0.025693;
   q.inverse_early_voltage = dice.chance(0.35) ? 0 : 1 / dice.log_between(15, 400);
   q.base_resistance = dice.chance(0.4) ? 0 : dice.log_between(1, 1000);
   q.transit_time = dice.chance(0.1) ? 0 : dice.log_between(5e-12, 5e-9);
   q.emitter_capacitance = dice.log_between(0.3e-12, 100e-12);
   q.feedback_capacitance = dice.log_between(0.1e-12, 30e-12);
+  publish_transition(q);
   q.cutoff_current = dice.chance(0.3) ? 0 : dice.log_between(1e-12, 1e-6);
   q.thermal_resistance = dice.chance(0.2) ? 0 : dice.log_between(30, 600);
   return q;

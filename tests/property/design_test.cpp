@@ -52,7 +52,7 @@ void check_local_optimum(const Spec& spec, const Candidate& c) {
   const DesignSpaces all = design_spaces(spec, built_in_catalogue(), devices);
   for (const DesignSpace& space : all.spaces) {
     if (c.variant != space.variant->key) continue;
-    Evaluator evaluator(spec, space);
+    Evaluator evaluator(spec, space, RankBy::error);
     Ranked r{grid_point(space, c), {}};
     r.key = evaluator.key(r.point);
     CHECK(r.key.error == Approx(c.error).margin(1e-12));
@@ -87,12 +87,34 @@ TEST_CASE("every example has candidates within 0.15 of each two-sided target", "
 }
 
 TEST_CASE("every listed candidate is better than all its neighbours", "[property][examples]") {
+  DesignOptions by_error;
+  by_error.rank_by = RankBy::error;
   for (const auto& file : example_files()) {
     INFO(file.filename());
     const Spec spec = read_example(file);
-    for (const Candidate& c : design(spec, built_in_catalogue()).candidates) {
+    for (const Candidate& c : design(spec, built_in_catalogue(), by_error).candidates) {
       INFO("candidate " << c.rank);
       check_local_optimum(spec, c);
+    }
+  }
+}
+
+TEST_CASE("on every example the first candidate is at least as capable as the most exact", "[property][examples]") {
+  for (const auto& file : example_files()) {
+    INFO(file.filename());
+    const DesignResult result = design(read_example(file), built_in_catalogue());
+    const auto& list = result.candidates;
+    const auto exact = std::min_element(list.begin(), list.end(),
+                                        [](const Candidate& a, const Candidate& b) { return a.error < b.error; });
+    CHECK(list.front().standing.key.capability >= exact->standing.key.capability);
+    CHECK(std::find(exact->best_at.begin(), exact->best_at.end(), "most exact") != exact->best_at.end());
+    DesignOptions by_error;
+    by_error.rank_by = RankBy::error;
+    CHECK(error_class(exact->error) <=
+          error_class(design(result.spec, built_in_catalogue(), by_error).candidates.front().error) + 1);
+    for (const Candidate& c : list) {
+      REQUIRE(c.assessment);
+      CHECK(c.assessment->yield.units >= 1000);
     }
   }
 }
@@ -104,7 +126,7 @@ TEST_CASE("listed candidates differ, are ranked, and carry ratings above their v
     for (std::size_t i = 0; i < result.candidates.size(); ++i) {
       const Candidate& c = result.candidates[i];
       CHECK(c.rank == static_cast<int>(i) + 1);
-      if (i > 0) CHECK(error_class(result.candidates[i - 1].error) <= error_class(c.error));
+      if (i > 0) CHECK_FALSE(comes_before(c.standing, result.candidates[i - 1].standing, RankBy::capability));
       CHECK(c.analysis.point.collector_emitter_voltage >= kLeastCollectorEmitter);
       for (const Part& p : c.parts) {
         INFO(info(p.role).key);
@@ -128,7 +150,7 @@ TEST_CASE("another seed may move the list, never the definition of its best", "[
   spec.seed = 99;
   const DesignResult result = design(spec, built_in_catalogue());
   REQUIRE_FALSE(result.candidates.empty());
-  CHECK(result.candidates.front().error <= kExact);
+  CHECK(result.candidates.front().standing.key.capability > 1.9);
 }
 
 TEST_CASE("a wider series never worsens the best error class", "[property]") {
@@ -136,7 +158,9 @@ TEST_CASE("a wider series never worsens the best error class", "[property]") {
   spec.devices = {"2N3904"};
   const auto best_class = [&](const char* series) {
     spec.parts.resistors.series = series;
-    return error_class(design(spec, built_in_catalogue()).candidates.front().error);
+    DesignOptions by_error;
+    by_error.rank_by = RankBy::error;
+    return error_class(design(spec, built_in_catalogue(), by_error).candidates.front().error);
   };
   const int e6 = best_class("E6"), e12 = best_class("E12"), e24 = best_class("E24");
   CHECK(e12 <= e6);

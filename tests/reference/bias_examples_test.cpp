@@ -19,8 +19,7 @@ double stability_of(const BookStage& book, double beta, double v_be) {
   const BiasTrial<double> t = bias_at_constant_vbe(book, beta, v_be);
   const BipolarParameters sheet = ideal_transistor(beta);
   const Circuit<double> c = circuit_of_book(book);
-  const HybridPi<double> h =
-      hybrid_pi(at_temperature(sheet, kReferenceTemperature, 1.0), t.i_c, t.v_be, t.v_ce, t.gain);
+  const HybridPi<double> h = hybrid_pi(at_temperature(sheet, kReferenceTemperature), t.i_c, t.v_be, t.v_ce, t.gain);
   return stage_figures<double>(c, t, h, {}, {}, sheet, kReferenceTemperature)[index(Figure::stability_factor)];
 }
 

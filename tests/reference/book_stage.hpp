@@ -89,7 +89,7 @@ inline BiasTrial<double> bias_at_constant_vbe(const BookStage& book, double beta
   sheet.log_saturation_current = std::log(1e-3) - v_be / v_t;
   BiasSolution solved;
   for (int i = 0; i < 100; ++i) {
-    solved = solve_bias(circuit, at_temperature(sheet, kReferenceTemperature, 1.0));
+    solved = solve_bias(circuit, at_temperature(sheet, kReferenceTemperature));
     if (std::fabs(solved.trial.v_be - v_be) < kVolts) break;
     sheet.log_saturation_current += (solved.trial.v_be - v_be) / v_t;
   }

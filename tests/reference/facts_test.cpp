@@ -7,13 +7,13 @@ using namespace reference;
 
 namespace {
 
-double thermal_voltage_at(double kelvin) { return at_temperature(ideal_transistor(100), kelvin, 1.0).thermal_voltage; }
+double thermal_voltage_at(double kelvin) { return at_temperature(ideal_transistor(100), kelvin).thermal_voltage; }
 
 /// VBE at a constant collector current, for a device that shows `v_be` at 25 °C.
 double base_emitter_at(double kelvin, double i_c, double v_be) {
   BipolarParameters p = ideal_transistor(100);
   p.log_saturation_current = std::log(i_c) - v_be / thermal_voltage_at(kReferenceTemperature);
-  const Bipolar<double> device = at_temperature(p, kelvin, 1.0);
+  const Bipolar<double> device = at_temperature(p, kelvin);
   const BookStage any{.supply = 12, .upper_divider = 10e3, .lower_divider = 1e3, .collector = 1e3, .emitter = 1e3};
   return bias_trial(circuit_of_book(any), device, std::log(i_c)).v_be;
 }
@@ -47,7 +47,7 @@ TEST_CASE("gain of a bypassed stage is about 40 for each volt across RC") {
     for (const double beta : {50.0, 500.0}) {
       const BookStage stage{
           .supply = 12, .upper_divider = 100e3, .lower_divider = 20e3, .collector = 5 / i_c, .emitter_bypassed = 1e3};
-      const HybridPi<double> h = hybrid_pi(at_temperature(ideal_transistor(beta), 298.15, 1.0), i_c, 0.65, 5.0, beta);
+      const HybridPi<double> h = hybrid_pi(at_temperature(ideal_transistor(beta), 298.15), i_c, 0.65, 5.0, beta);
       INFO(i_c << " A, beta " << beta);
       CHECK(midband_gain_of(stage, h) == Approx(40 * 5.0).epsilon(kRuleOfThumb));
     }
@@ -61,7 +61,7 @@ TEST_CASE("4k7 over 150 ohm is not a gain of 31") {
   const auto gain = [](double i_c, double load) {
     const BookStage stage{
         .upper_divider = 100e3, .lower_divider = 20e3, .collector = 4.7e3, .emitter = 150, .load = load};
-    return midband_gain_of(stage, hybrid_pi(at_temperature(ideal_transistor(300), 298.15, 1.0), i_c, 0.65, 2.0, 300.0));
+    return midband_gain_of(stage, hybrid_pi(at_temperature(ideal_transistor(300), 298.15), i_c, 0.65, 2.0, 300.0));
   };
   CHECK(gain(0.4e-3, INFINITY) == Approx(22).margin(kHalfDigit));
   CHECK(gain(0.7e-3, INFINITY) == Approx(25).margin(kHalfDigit));

@@ -55,7 +55,7 @@ BipolarParameters device_of(double transition, double current, double feedback, 
 
 /// Hybrid-pi elements where kT/q is the book's.
 HybridPi<double> elements(const BipolarParameters& p, double current, double thermal_voltage, double beta) {
-  return hybrid_pi(at_temperature(p, junction_for(thermal_voltage), 1.0), current, 0.65, 5.0, beta);
+  return hybrid_pi(at_temperature(p, junction_for(thermal_voltage)), current, 0.65, 5.0, beta);
 }
 
 }  // namespace

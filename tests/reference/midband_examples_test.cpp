@@ -197,7 +197,7 @@ TEST_CASE("gain and VBE of a stage without emitter resistor") {
   sheet.saturation_current_exponent = sheet.bandgap = sheet.gain_exponent = 0;
   const BookStage book{.supply = 10, .upper_divider = 100e3, .lower_divider = 100e3, .collector = 6.8e3};
   const Circuit<double> circuit = circuit_of_book(book);
-  const Bipolar<double> device = at_temperature(sheet, junction_for(25e-3), 1.0);
+  const Bipolar<double> device = at_temperature(sheet, junction_for(25e-3));
   const BiasTrial<double> t = bias_trial(circuit, device, std::log((10 - 3.2) / 6.8e3));
   CHECK(t.v_ce == Approx(3.2).epsilon(kRounding));
   CHECK(t.v_be == Approx(690.8e-3).epsilon(kRounding));

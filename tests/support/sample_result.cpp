@@ -2,6 +2,8 @@
 
 #include <cmath>
 
+#include "sample_assessment.hpp"
+
 namespace bandwright::test {
 
 namespace {
@@ -99,7 +101,7 @@ Spec sample_spec() {
   Spec spec;
   spec.title = "Tide gauge preamplifier";
   spec.supply = {12, 11.4, 12.6};
-  spec.ambient = {298.15, 298.15, 298.15};
+  spec.ambient = {298.15, 273.15, 333.15};
   spec.load = {1e-4, 0, 0};
   spec.requirements[index(Figure::gain)] = Requirement{50, 44.6, 56.1};
   spec.requirements[index(Figure::lower_cutoff)] = Requirement{40, kNotComputed, 50};
@@ -125,6 +127,8 @@ Candidate sample_candidate() {
   c.margins[index(Figure::gain)] = 0.9;
   c.margins[index(Figure::lower_cutoff)] = 0.81;
   c.margins[index(Figure::upper_cutoff)] = 0.006;
+  c.assessment = sample_assessment(c);
+  c.non_dominated = true;
   return c;
 }
 
@@ -133,14 +137,19 @@ DesignResult sample_result() {
   result.spec = sample_spec();
   result.met = true;
   result.definitions = {"gain: source EMF to load, at the peak of the response"};
-  result.assumptions = {"ambient 25 °C only"};
+  result.assumptions = {"the junction is as warm at every condition"};
   result.from_memory = {"BC547B base resistance rbb' 110 Ω, from memory: halved or doubled, gain moves 0.2 dB"};
   result.dropped = {"BFR92A: VCEO 15 V is under the highest supply"};
   Candidate second = sample_candidate();
   second.rank = 2;
+  second.non_dominated = false;
   second.best_at = {"lowest current", "smallest capacitors"};
   second.analysis.figures[index(Figure::upper_cutoff)] = 18e3;
   second.shortfalls = {{Figure::upper_cutoff, 18e3, 20e3, "upper cutoff: 18 kHz, needs at least 20 kHz (10 % short)"}};
+  second.assessment->capability = -0.2;
+  second.assessment->yield = {20000, 18200, 0.9059, 0.9139, 7, 0, 0};
+  second.assessment->nominal_met = false;
+  second.assessment->verdict = "not met";
   result.candidates = {sample_candidate(), second};
   return result;
 }

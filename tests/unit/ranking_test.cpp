@@ -25,6 +25,7 @@ Standing standing(const RankKey& k, const char* device = "A", double current = 1
   s.device = device;
   s.variant = "split emitter";
   s.collector_current = current;
+  s.key.supply_current = 1.1 * current;
   s.input_resistance = 5e3;
   s.total_capacitance = 12e-6;
   return s;
@@ -104,4 +105,51 @@ TEST_CASE("titles go to the best of the list", "[ranking]") {
   CHECK(holds(0, "most exact"));
   CHECK(holds(1, "least sensitive"));
   CHECK(holds(1, "lowest current"));
+}
+
+TEST_CASE("every order puts its measure first among those that meet the spec", "[ranking]") {
+  RankKey capable = key(0.4, 2), exact = key(0.01, 1), misses = key(1.2, 0.1);
+  capable.capability = 1.5, exact.capability = 0.7, misses.capability = 2;
+  capable.supply_current = 2e-3, exact.supply_current = 1e-3, misses.supply_current = 1e-4;
+  capable.parts = 7, exact.parts = 9, misses.parts = 5;
+  const auto first = [&](RankBy by) {
+    std::vector<RankKey> list = {exact, misses, capable};
+    std::sort(list.begin(), list.end(), [by](const RankKey& a, const RankKey& b) { return comes_before(a, b, by); });
+    CHECK(list[2].error == (by == RankBy::error ? 1.2 : misses.error));
+    return list[0].error;
+  };
+  CHECK(first(RankBy::capability) == capable.error);
+  CHECK(first(RankBy::yield) == capable.error);  // while searching led by the capability
+  CHECK(first(RankBy::worst_case) == capable.error);
+  CHECK(first(RankBy::error) == exact.error);
+  CHECK(first(RankBy::sensitivity) == exact.error);
+  CHECK(first(RankBy::current) == exact.error);
+  CHECK(first(RankBy::parts) == capable.error);
+}
+
+TEST_CASE("equal capability goes by error, equal yield by capability", "[ranking]") {
+  Standing a = standing(key(0.4, 1)), b = standing(key(0.1, 1));
+  a.key.capability = b.key.capability = 2;
+  CHECK(comes_before(b, a, RankBy::capability));
+  a.yield = b.yield = 1;
+  a.key.capability = 1.9;
+  CHECK(comes_before(b, a, RankBy::yield));
+  a.yield = 0.9, a.key.capability = 2, b.yield = 0.8;
+  CHECK(comes_before(a, b, RankBy::yield));
+  a.worst_case_margin = -0.1, b.worst_case_margin = 0.2;
+  CHECK(comes_before(b, a, RankBy::worst_case));
+}
+
+TEST_CASE("orders have a word and a reason, in the order of the enum", "[ranking]") {
+  for (std::size_t i = 0; i < rank_orders().size(); ++i) CHECK(rank_orders()[i].by == static_cast<RankBy>(i));
+  CHECK(std::string(info(RankBy::worst_case).word) == "worst-case");
+}
+
+TEST_CASE("non-dominated: no other is as good in all and better in one", "[ranking]") {
+  Standing a = standing(key(0.1, 1), "A", 1e-3), worse = standing(key(0.1, 1), "B", 2e-3);
+  Standing other = standing(key(0.3, 1), "C", 0.5e-3);
+  CHECK(non_dominated({a, worse, other}) == std::vector<bool>{true, false, true});
+  worse.key.capability = 1;  // now it is better in something
+  CHECK(non_dominated({a, worse, other}) == std::vector<bool>{true, true, true});
+  CHECK(non_dominated({a, a}) == std::vector<bool>{true, true});  // equals do not dominate each other
 }

@@ -56,7 +56,9 @@ TEST_CASE("columns stand in the order of the format") {
   const Record headings = read_records(write_csv(test::sample_result())).front();
   const Record first = {"rank", "device",       "variant",     "error", "tolerance_sensitivity",
                         "gain", "lower_cutoff", "upper_cutoff"};
-  const Record last = {"R1", "R2", "R3", "R4", "R5", "C1", "C2", "C3", "C4"};
+  const Record last = {"R1",           "R2", "R3",         "R4",    "R5",        "C1",         "C2",
+                       "C3",           "C4", "capability", "yield", "yield_low", "yield_high", "worst_case_margin",
+                       "non_dominated"};
   REQUIRE(headings.size() > first.size() + last.size());
   CHECK(std::equal(first.begin(), first.end(), headings.begin()));
   CHECK(std::equal(last.rbegin(), last.rend(), headings.rbegin()));
@@ -90,6 +92,23 @@ TEST_CASE("a figure without a value is an empty field") {
   const auto records = read_records(write_csv(result));
   CHECK(records[1][column(records[0], "upper_cutoff")].empty());
   CHECK(records[1][column(records[0], "tolerance_sensitivity")].empty());
+}
+
+TEST_CASE("the assessment stands behind the parts, empty where there is none") {
+  DesignResult result = test::sample_result();
+  result.candidates[1].assessment.reset();
+  const auto records = read_records(write_csv(result));
+  const auto cell = [&](std::size_t row, const char* name) { return records[row][column(records[0], name)]; };
+  const Assessment& assessment = *result.candidates[0].assessment;
+  CHECK(std::stod(cell(1, "capability")) == assessment.capability);
+  CHECK(std::stod(cell(1, "yield")) == 19840.0 / 20000);
+  CHECK(std::stod(cell(1, "yield_low")) == assessment.yield.low);
+  CHECK(std::stod(cell(1, "yield_high")) == assessment.yield.high);
+  CHECK(std::stod(cell(1, "worst_case_margin")) == assessment.worst_case_margin);
+  CHECK(cell(1, "non_dominated") == "true");
+  for (const char* name : {"capability", "yield", "yield_low", "yield_high", "worst_case_margin"})
+    CHECK(cell(2, name).empty());
+  CHECK(cell(2, "non_dominated") == "false");
 }
 
 TEST_CASE("commas, quotes and line ends inside a field survive") {

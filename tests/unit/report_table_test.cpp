@@ -3,6 +3,7 @@
 
 #include "catch.hpp"
 #include "report/text_sheet.hpp"
+#include "sample_assessment.hpp"
 #include "sample_result.hpp"
 
 using namespace bandwright;
@@ -72,6 +73,8 @@ TEST_CASE("requirements are shown as they were understood") {
   CHECK_THAT(text, ContainsSubstring("at least 20 kHz"));
   CHECK_THAT(text, ContainsSubstring("11.4 V to 12.6 V"));
   CHECK_THAT(text, ContainsSubstring("Tide gauge preamplifier"));
+  CHECK_THAT(text,
+             ContainsSubstring("99 % must pass; 20,000 simulated, fewer once the 95 % interval is narrower than"));
 }
 
 TEST_CASE("each shortfall is named with its rank") {
@@ -96,7 +99,7 @@ TEST_CASE("hints say that they are common practice") {
 
 TEST_CASE("what the result rests on is listed") {
   const std::string text = write_table(test::sample_result());
-  for (const char* piece : {"gain: source EMF to load", "ambient 25 °C only", "from memory", "BFR92A"})
+  for (const char* piece : {"gain: source EMF to load", "the junction is as warm", "from memory", "BFR92A"})
     CHECK_THAT(text, ContainsSubstring(piece));
 }
 
@@ -134,8 +137,14 @@ TEST_CASE("colour appears only where it is asked for, and is never the only sign
 }
 
 TEST_CASE("a page is as wide as it is told, as far as its words allow") {
-  const DesignResult result = test::sample_result();
-  for (const int width : {80, 100, 120}) CHECK(widest(write_table(result, {false, width})) <= std::size_t(width));
+  DesignResult result = test::sample_result();
+  result.candidates[0].allocation = test::sample_allocation();
+  for (const int width : {80, 100, 120})
+    for (const RankOrder& order : rank_orders()) {
+      result.ranked_by = order.by;
+      INFO(order.word << " at " << width);
+      CHECK(widest(write_table(result, {false, width})) <= std::size_t(width));
+    }
   CHECK(widest(write_table(result, {false, 400})) > 120);
 }
 
@@ -157,6 +166,7 @@ TEST_CASE("a stage that is not active shows its parts and the reason, once") {
   Candidate& c = result.candidates[0];
   c.analysis.point.state = BiasState::saturated;
   c.analysis.figures.fill(kNotComputed);
+  c.assessment.reset();
   const std::string reason = "not active: VCE would be 0.1 V, needs 0.5 V";
   for (const FigureInfo& figure : figures())
     if (figure.use != FigureUse::reserved) c.notes[figure.key] = reason;

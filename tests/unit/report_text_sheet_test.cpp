@@ -18,6 +18,13 @@ TEST_CASE("wrapping breaks at spaces and leaves long words whole") {
   CHECK(wrap("ΩΩΩ ΩΩΩ", 7) == Lines{"ΩΩΩ ΩΩΩ"});
 }
 
+TEST_CASE("a number keeps its unit, where there is room for both") {
+  CHECK(wrap("from 12.5 kHz on", 11) == Lines{"from", "12.5 kHz on"});
+  CHECK(wrap("12 units", 4) == Lines{"12", "units"});
+  CHECK(wrap("12.5 kHz", 7) == Lines{"12.5", "kHz"});
+  CHECK(wrap("C3 V", 3) == Lines{"C3", "V"});
+}
+
 TEST_CASE("columns align on either side and empty ones are left out") {
   TextGrid grid{{{"a", false}, {"empty", false}, {"n", true}}, {}, {0}};
   grid.add({"first", "", "1"});
@@ -35,10 +42,25 @@ TEST_CASE("the flexible column gives way on a narrow page") {
   CHECK(grid.lines(80).body.size() == 1);
 }
 
+TEST_CASE("dispensable columns are left out where wrapping is not enough, first one first") {
+  TextGrid grid{{{"text", false}, {"one", true}, {"two", true}}, {}, {0}, {2, 1}};
+  grid.add({"words to be wrapped", "1.000", "2.000"});
+  CHECK(grid.lines(80).body == Lines{"words to be wrapped  1.000  2.000"});
+  CHECK(grid.lines(22).headings == Lines{"text        one    two"});
+  CHECK(grid.lines(21).headings == Lines{"text              one"});
+  CHECK(grid.lines(14).headings == Lines{"text"});
+}
+
 TEST_CASE("a grid without rows prints nothing") {
   const TextGrid grid{{{"a", false}}, {}, {0}};
   CHECK(grid.lines(80).headings.empty());
   CHECK(grid.lines(80).body.empty());
+}
+
+TEST_CASE("headings are wrapped as paragraphs are") {
+  TextSheet sheet{{false, 60}};
+  sheet.heading(std::string(50, 'a') + " " + std::string(50, 'b'));
+  CHECK(sheet.text() == std::string(50, 'a') + "\n" + std::string(50, 'b') + "\n");
 }
 
 TEST_CASE("space is never doubled") {

@@ -1,28 +1,15 @@
 // Malformed specs: each with the path that is named and a piece of the message.
 #include <algorithm>
 #include <bandwright/fault.hpp>
-#include <bandwright/spec.hpp>
 #include <string>
 #include <vector>
 
 #include "catch.hpp"
-#include "spec_texts.hpp"
+#include "spec_faults.hpp"
 
 using namespace bandwright;
 
 namespace {
-
-struct Malformed {
-  std::string text;
-  const char* where;
-  const char* says;
-};
-
-// The least spec with members added.
-std::string with(const std::string& members) {
-  std::string text = kLeastSpec;
-  return text.insert(text.find('{') + 1, members + ", ");
-}
 
 // The least spec with another supply.
 std::string supply(const std::string& json) {
@@ -37,15 +24,6 @@ std::string gain(const std::string& json) {
 }
 std::string besides(const std::string& members) {
   return required(R"("gain": 50, "lower_cutoff": "40 Hz", "upper_cutoff": "20 kHz", )" + members);
-}
-
-std::vector<Fault> faults_of(const std::string& text) {
-  try {
-    read_spec(text, "test.json");
-  } catch (const InputError& error) {
-    return error.faults();
-  }
-  return {};
 }
 
 std::vector<Malformed> syntax() {
@@ -184,26 +162,9 @@ std::vector<Malformed> not_in_this_version() {
       {with(R"("parts": {"stock_only": true})"), "parts.stock_only", "parts.stock_only is not available"},
       {with(R"("parts": {"pairs": true})"), "parts.pairs", "its default false: parts.pairs is not available"},
       {with(R"("parts": {"boards": 25})"), "parts.boards", "its default 1: parts.boards is not available"},
-      {with(R"("assess": {"units": 1000})"), "assess.units", "its default 20000: assess.units is not available"},
-      {with(R"("assess": {"yield": "95 %"})"), "assess.yield", "assess.yield is not available"},
-      {with(R"("assess": {"interval": 0})"), "assess.interval", "assess.interval is not available"},
-      {with(R"("assess": {"distribution": "uniform"})"), "assess.distribution", "assess.distribution is not available"},
       {R"({"format": "bandwright/result", "version": 2, "spec": {"supply": 1}})", "version", "version 1"},
       {R"({"format": "bandwright/result", "version": 1})", "spec", "the spec of the result"},
   };
-}
-
-void check_each(const std::vector<Malformed>& rows) {
-  for (const Malformed& row : rows) {
-    const std::vector<Fault> faults = faults_of(row.text);
-    INFO(row.text);
-    REQUIRE(!faults.empty());
-    INFO(describe(faults.front()));
-    // One mistake is one fault, and not a trail of others.
-    CHECK((faults.size() == 1 || row.text.find("\"format\"") != std::string::npos));
-    CHECK(faults.front().where == row.where);
-    CHECK(describe(faults.front()).find(row.says) != std::string::npos);
-  }
 }
 
 }  // namespace
@@ -221,11 +182,13 @@ TEST_CASE("all faults of a file are reported at once") {
     "source": {"resistance": "10 Hz"},
     "requirements": {"gain": {"min": 60, "max": 40}, "lower_cutoff": "x", "cost": 3},
     "parts": {"boards": 2},
-    "search": {"candidates": 5000}
+    "search": {"candidates": 5000},
+    "assess": {"units": 1, "causes": {"collector": "5", "hFE": "off"}}
   })");
-  REQUIRE(faults.size() == 8);
+  REQUIRE(faults.size() == 11);
   for (const char* where : {"suply", "source.resistance", "requirements.gain.min", "requirements.lower_cutoff",
-                            "requirements.upper_cutoff", "requirements.cost", "parts.boards", "search.candidates"}) {
+                            "requirements.upper_cutoff", "requirements.cost", "parts.boards", "search.candidates",
+                            "assess.units", "assess.causes.collector", "assess.causes.hFE"}) {
     INFO(where);
     CHECK(std::count_if(faults.begin(), faults.end(), [&](const Fault& f) { return f.where == where; }) == 1);
   }

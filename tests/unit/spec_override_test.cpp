@@ -74,6 +74,33 @@ TEST_CASE("lists, ranges and pinned values on the command line") {
   CHECK(spec.title == "another");
 }
 
+TEST_CASE("assess on the command line, on top of the file's") {
+  const Spec spec = read(kFullSpec, {{"assess-units", "1000"},
+                                     {"assess-yield", "90%"},
+                                     {"assess-interval", "0.2%"},
+                                     {"assess-distribution", "normal"},
+                                     {"assess-causes",
+                                      "current_gain=off, source_resistance=10%,bypass=-20/+80%,"
+                                      "base_emitter_voltage=25mV,temperature_coefficients=50ppm/K"}});
+  CHECK(spec.assess.units == 1000);
+  CHECK(spec.assess.yield == 0.9);
+  CHECK(spec.assess.interval == 0.002);
+  CHECK_FALSE(spec.assess.uniform);
+  CHECK(*spec.assess.causes[index(Cause::current_gain)] == Tolerance{0, 0});
+  CHECK(*spec.assess.causes[index(Cause::source_resistance)] == Tolerance{0.1, 0.1});
+  CHECK(*spec.assess.causes[index(Cause::bypass)] == Tolerance{0.2, 0.8});
+  CHECK(*spec.assess.causes[index(Cause::base_emitter_voltage)] == Tolerance{0.025, 0.025});
+  CHECK(*spec.assess.causes[index(Cause::load_resistance)] == Tolerance{0.1, 0.1});  // the file's
+  CHECK(*spec.assess.temperature_coefficient == 50e-6);
+}
+
+TEST_CASE("a temperature coefficient on the command line may be a number alone, 1/K") {
+  for (const char* number : {"0.0001", "1e-4", " 0.0001"})
+    CHECK(*read(kLeastSpec, {{"assess-causes", std::string("temperature_coefficients=") + number}})
+               .assess.temperature_coefficient == 1e-4);
+  CHECK(*read(kLeastSpec, {{"assess-causes", "temperature_coefficients=off"}}).assess.temperature_coefficient == 0);
+}
+
 TEST_CASE("faults of the command line name the option") {
   struct Bad {
     Override given;
@@ -89,6 +116,8 @@ TEST_CASE("faults of the command line name the option") {
            {{"lower-cutoff-min", "60 Hz"}, "--lower-cutoff-min: found \"60 Hz\"; expected less than max, 50 Hz"},
            {{"pinned", "colector=4k7"}, "--pinned: found \"colector\"; expected one of the roles upper_divider"},
            {{"pinned", "colector=4k7"}, "did you mean \"collector\"?"},
+           {{"pinned", "R3=4k7"}, "did you mean \"collector\"?"},
+           {{"pinned", "hFE=4k7"}, "--pinned: found \"hFE\"; expected one of the roles upper_divider"},
            {{"pinned", "collector"}, "--pinned: found \"collector\"; expected role=value"},
            {{"pinned", "collector=absent"},
             "--pinned collector: found \"absent\"; expected a value: collector is never absent"},
@@ -100,6 +129,21 @@ TEST_CASE("faults of the command line name the option") {
            {{"seed", "-1"}, "a whole number from 0 to 9007199254740992"},
            {{"supply", ""}, "--supply: nothing found; expected a voltage"},
            {{"title", "\xFF"}, "text in UTF-8"},
+           {{"assess-units", "10"}, "--assess-units: found \"10\"; expected a whole number from 100 to 1000000"},
+           {{"assess-yield", "99"}, "--assess-yield: found \"99\"; expected a value from 0.0001 % to 100 %"},
+           {{"assess-interval", "2"}, "--assess-interval: found \"2\"; expected a value from 0 % to 100 %"},
+           {{"assess-distribution", "norml"}, "expected normal or uniform; did you mean \"normal\"?"},
+           {{"assess-yeild", "99%"}, "did you mean \"--assess-yield\"?"},
+           {{"assess-causes", "off"}, "--assess-causes: found \"off\"; expected cause=value, several between commas"},
+           {{"assess-causes", "curent_gain=off"},
+            "--assess-causes: found \"curent_gain\"; expected one of the causes upper_divider"},
+           {{"assess-causes", "curent_gain=off"}, "did you mean \"current_gain\"?"},
+           {{"assess-causes", "VBE=30mV"}, "did you mean \"base_emitter_voltage\"?"},
+           {{"assess-causes", "current_gain=10"},
+            "--assess-causes current_gain: found \"10\"; expected a tolerance such as 5 % or -20/+50 % (write 10 %), "
+            "or off"},
+           {{"assess-causes", "temperature_coefficients=100"},
+            "--assess-causes temperature_coefficients: found \"100\"; expected a value from 0 to 10000 ppm/K, or off"},
            {{"topologies", "cascode"}, "no other topology is available in this version"},
        }) {
     const std::string said = complaint({row.given});

@@ -1,4 +1,5 @@
 // Reading a spec: defaults, conditions, limits of requirements.
+#include <algorithm>
 #include <bandwright/fault.hpp>
 #include <bandwright/spec.hpp>
 #include <cmath>
@@ -32,6 +33,16 @@ Spec supply(const std::string& json) {
   return read(text);
 }
 
+// The limits that the least spec has with a cause said.
+std::optional<Tolerance> limits(Cause cause, const std::string& said) {
+  return with(std::string(R"("assess": {"causes": {")") + info(cause).key + "\": " + said + "}}")
+      .assess.causes[index(cause)];
+}
+
+std::optional<double> coefficient(const std::string& said) {
+  return with(R"("assess": {"causes": {"temperature_coefficients": )" + said + "}}").assess.temperature_coefficient;
+}
+
 constexpr double kRounding = 1e-15;  // one operation in double
 
 }  // namespace
@@ -58,6 +69,12 @@ TEST_CASE("a spec that says the least has every default filled in") {
   CHECK(spec.topologies == std::vector<std::string>{"common-emitter"});
   CHECK(spec.candidates == 10);
   CHECK(spec.seed == 1);
+  CHECK(spec.assess.units == 20000);
+  CHECK(spec.assess.yield == 0.99);
+  CHECK(spec.assess.interval == 0.005);
+  CHECK_FALSE(spec.assess.uniform);
+  for (const auto& limits : spec.assess.causes) CHECK_FALSE(limits);
+  CHECK_FALSE(spec.assess.temperature_coefficient);
   CHECK_FALSE(spec.gain_from_input);
   CHECK_FALSE(spec.gain_at);
   CHECK(spec.notes.empty());
@@ -87,6 +104,18 @@ TEST_CASE("a spec that says everything") {
   CHECK(*spec.parts.pinned[index(Role::emitter)] == 0);
   CHECK_FALSE(spec.parts.pinned[index(Role::bypass)]);
   CHECK(spec.seed == 9007199254740992u);
+  CHECK(spec.assess.units == 5000);
+  CHECK(spec.assess.yield == 0.95);
+  CHECK(spec.assess.interval == 0);
+  CHECK(spec.assess.uniform);
+  CHECK(*spec.assess.causes[index(Cause::upper_divider)] == Tolerance{0.02, 0.02});
+  CHECK(*spec.assess.causes[index(Cause::bypass)] == Tolerance{0.2, 1.5});
+  CHECK(*spec.assess.causes[index(Cause::shunt)] == Tolerance{0, 0});
+  CHECK(*spec.assess.causes[index(Cause::current_gain)] == Tolerance{0.5, 1.2});
+  CHECK(*spec.assess.causes[index(Cause::base_emitter_voltage)] == Tolerance{0.03, 0.03});
+  CHECK(*spec.assess.causes[index(Cause::load_resistance)] == Tolerance{0.1, 0.1});
+  CHECK_FALSE(spec.assess.causes[index(Cause::collector)]);
+  CHECK(*spec.assess.temperature_coefficient == 100e-6);
   CHECK(spec.notes == std::vector<std::string>{"gain: -34, a minus sign: inverting",
                                                "output_swing.min: 3 Vpp read as 1.5 V peak",
                                                "input_overload.min: 10 mVrms read as 14.14 mV peak"});
@@ -168,9 +197,46 @@ TEST_CASE("to check parts no requirement is needed") {
 }
 
 TEST_CASE("keys that later versions will read are accepted at their default") {
-  CHECK(with(R"("assess": {"units": 20000, "yield": "99 %", "interval": "0.5 %", "distribution": "normal"})").seed ==
-        1);
   CHECK(with(R"("parts": {"stock_only": false, "pairs": false, "boards": 1})").seed == 1);
+}
+
+TEST_CASE("the ends of what assess takes are taken") {
+  CHECK(with(R"("assess": {"units": 100})").assess.units == 100);
+  CHECK(with(R"("assess": {"units": "1000000"})").assess.units == 1000000);
+  CHECK(with(R"("assess": {"yield": "100 %"})").assess.yield == 1);
+  CHECK(with(R"("assess": {"interval": 1})").assess.interval == 1);
+  CHECK_FALSE(with(R"("assess": {"distribution": "normal"})").assess.uniform);
+  CHECK(with(R"("assess": {"causes": {}})").assess.units == 20000);
+}
+
+TEST_CASE("every cause is switched off and limited by its key, and touches no other") {
+  for (const CauseInfo& row : causes()) {
+    INFO(row.key);
+    const bool volts = row.scale == CauseScale::volts;
+    const Spec spec = with(std::string(R"("assess": {"causes": {")") + row.key + R"(": "off"}})");
+    CHECK(*spec.assess.causes[index(row.cause)] == Tolerance{0, 0});
+    CHECK(std::count(spec.assess.causes.begin(), spec.assess.causes.end(), std::nullopt) == kCauseCount - 1);
+    CHECK(*limits(row.cause, volts ? "\"40 mV\"" : "\"4 %\"") == Tolerance{0.04, 0.04});
+  }
+}
+
+TEST_CASE("limits of a cause: shares about the value, volts for the base-emitter voltage") {
+  CHECK(*limits(Cause::collector, "\"±10 %\"") == Tolerance{0.1, 0.1});
+  CHECK(*limits(Cause::collector, "\"-0/+50 %\"") == Tolerance{0, 0.5});
+  CHECK(*limits(Cause::collector, "0.1") == Tolerance{0.1, 0.1});
+  CHECK(*limits(Cause::cutoff_current, "\"-99/+900 %\"") == Tolerance{0.99, 9});
+  CHECK(*limits(Cause::base_emitter_voltage, "\"200 mV\"") == Tolerance{0.2, 0.2});
+  CHECK(*limits(Cause::base_emitter_voltage, "0.025") == Tolerance{0.025, 0.025});
+}
+
+TEST_CASE("temperature coefficients: a share for each kelvin, or off") {
+  CHECK(*coefficient("\"50 ppm/K\"") == 50e-6);
+  CHECK(*coefficient("\"±50 ppm/K\"") == 50e-6);
+  CHECK(*coefficient("\"0.5 %/K\"") == 0.005);
+  CHECK(*coefficient("\"10000 ppm/K\"") == 0.01);
+  CHECK(*coefficient("0.0001") == 0.0001);
+  CHECK(*coefficient("\"off\"") == 0);
+  CHECK(*coefficient("0") == 0);
 }
 
 TEST_CASE("a result document is read for its spec") {

@@ -1,5 +1,6 @@
 // Roles, figures and options: the tables hold together.
 #include <algorithm>
+#include <bandwright/cause.hpp>
 #include <bandwright/figure.hpp>
 #include <bandwright/role.hpp>
 #include <bandwright/spec.hpp>
@@ -22,6 +23,28 @@ TEST_CASE("roles are found by key and by designator") {
   CHECK(names.size() == 2 * kRoleCount);
   CHECK_FALSE(find_role("R9"));
   CHECK_FALSE(find_role(""));
+}
+
+TEST_CASE("causes stand in the order of the enum, each with its own key and symbol; the roles come first") {
+  std::set<std::string> names;
+  for (std::size_t i = 0; i < kCauseCount; ++i) {
+    const CauseInfo& row = causes()[i];
+    INFO(row.key);
+    CHECK(index(row.cause) == i);
+    CHECK(&info(row.cause) == &row);
+    CHECK(find_cause(row.key) == row.cause);
+    CHECK(find_cause(row.symbol) == row.cause);
+    names.insert({row.key, row.symbol});
+  }
+  CHECK(names.size() == 2 * kCauseCount);
+  for (const RoleInfo& role : roles()) {
+    const CauseInfo& row = info(cause_of(role.role));
+    CHECK(std::string(row.key) == role.key);
+    CHECK(std::string(row.symbol) == role.designator);
+    CHECK(row.kind == CauseKind::part);
+  }
+  CHECK_FALSE(find_cause("temperature_coefficients"));
+  CHECK_FALSE(find_cause(""));
 }
 
 TEST_CASE("the parts that a divider-biased stage cannot do without are never absent") {
@@ -73,6 +96,7 @@ TEST_CASE("options have one name each, and every required figure has its four") 
       CHECK(options.count(option + end) == (figure.use == FigureUse::required ? 1 : 0));
   }
   for (const char* option : {"supply", "supply-tolerance", "source-resistance", "load-resistance", "ambient-min",
-                             "gain-from", "gain-at", "resistors-series", "devices", "pinned", "ranges", "seed"})
+                             "gain-from", "gain-at", "resistors-series", "devices", "pinned", "ranges", "seed",
+                             "assess-units", "assess-yield", "assess-interval", "assess-distribution", "assess-causes"})
     CHECK(options.count(option) == 1);
 }

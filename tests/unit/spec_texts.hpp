@@ -40,7 +40,11 @@ inline const std::string kFullSpec = R"({
             "pinned": {"collector": "4k7", "shunt": "absent", "emitter": 0}},
   "devices": ["2N3904", "BC547B"],
   "topologies": ["common-emitter"],
-  "search": {"candidates": 7, "seed": 9007199254740992}
+  "search": {"candidates": 7, "seed": 9007199254740992},
+  "assess": {"units": 5000, "yield": "95 %", "interval": 0, "distribution": "uniform",
+             "causes": {"upper_divider": 0.02, "bypass": "-20/+150 %", "shunt": "off", "current_gain": "-50/+120 %",
+                        "base_emitter_voltage": "30 mV", "load_resistance": "10 %",
+                        "temperature_coefficients": "100 ppm/K"}}
 })";
 
 }  // namespace bandwright

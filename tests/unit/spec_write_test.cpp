@@ -60,6 +60,12 @@ void check_same(const Spec& a, const Spec& b) {
   CHECK(a.topologies == b.topologies);
   CHECK(a.candidates == b.candidates);
   CHECK(a.seed == b.seed);
+  CHECK(a.assess.units == b.assess.units);
+  CHECK(a.assess.yield == b.assess.yield);
+  CHECK(a.assess.interval == b.assess.interval);
+  CHECK(a.assess.uniform == b.assess.uniform);
+  CHECK(a.assess.causes == b.assess.causes);
+  CHECK(a.assess.temperature_coefficient == b.assess.temperature_coefficient);
 }
 
 void check_round_trip(const std::string& text, SpecUse use = SpecUse::design) {
@@ -100,6 +106,15 @@ TEST_CASE("numbers with all their digits survive") {
     spec.ambient.max = spec.ambient.nominal;
     spec.parts.capacitors.tolerance = Tolerance{scattered(state, 1e-3, 0.9), scattered(state, 1e-3, 0.9)};
     spec.gain_at = scattered(state, 41, 19999);
+    spec.assess.yield = scattered(state, 1e-3, 0.999);
+    spec.assess.interval = scattered(state, 1e-3, 0.999);
+    for (const CauseInfo& row : causes()) {
+      const double v = scattered(state, 1e-5, 0.1);
+      // From 1 upwards a percentage has fewer bits behind the point than the share.
+      const Tolerance apart = {scattered(state, 1e-3, 0.99), scattered(state, 1e-3, 9.9)};
+      spec.assess.causes[index(row.cause)] = row.scale == CauseScale::volts ? Tolerance{v, v} : apart;
+    }
+    spec.assess.temperature_coefficient = scattered(state, 1e-7, 0.01);
     check_same(spec, read_spec(write_spec(spec), "written"));
   }
 }
@@ -115,10 +130,22 @@ TEST_CASE("the written form: SI numbers, temperatures as strings, limits resolve
   CHECK(json["requirements"]["gain"]["from"] == "source");
   CHECK(json["parts"]["resistors"]["series"] == "E24");
   CHECK(json["search"]["candidates"] == 10);
-  CHECK_FALSE(json.contains("assess"));
+  CHECK(json["assess"].dump() == R"({"units":20000,"yield":0.99,"interval":0.005,"distribution":"normal"})");
   CHECK_FALSE(json["parts"].contains("boards"));
   CHECK_FALSE(json.contains("devices"));
   CHECK(json.begin().key() == "supply");  // the order of the format
+}
+
+TEST_CASE("causes are written where they were given: shares, volts and 1/K, or off") {
+  const auto json = spec_json(read_spec(kFullSpec, "test.json"));
+  CHECK(json["assess"].dump() ==
+        R"({"units":5000,"yield":0.95,"interval":0.0,"distribution":"uniform","causes":{"upper_divider":0.02,)"
+        R"("bypass":"-20/+150 %","shunt":"off","current_gain":"-50/+120 %","base_emitter_voltage":0.03,)"
+        R"("load_resistance":0.1,"temperature_coefficients":0.0001}})");
+  const auto off = spec_json(read_spec(
+      R"({"supply": 5, "assess": {"causes": {"base_emitter_voltage": "off", "temperature_coefficients": "off"}}})", "",
+      {}, SpecUse::check));
+  CHECK(off["assess"]["causes"].dump() == R"({"base_emitter_voltage":"off","temperature_coefficients":"off"})");
 }
 
 TEST_CASE("an open side is left out") {

@@ -3,6 +3,7 @@
 #include <string>
 
 #include "catch.hpp"
+#include "units/quantity_text.hpp"
 
 using namespace bandwright;
 
@@ -60,5 +61,33 @@ TEST_CASE("what is no tolerance is refused") {
     const std::string said = complaint(row.text, Dimension::gain);
     INFO("\"" << row.text << "\": " << said);
     CHECK(said.find(row.says) != std::string::npos);
+  }
+}
+
+TEST_CASE("shares for each kelvin") {
+  // Exact: a decimal text has one nearest double, whatever unit it is written with.
+  struct Written {
+    const char* text;
+    double value;
+  };
+  std::string expected;
+  for (const Written& row : {Written{"50 ppm/K", 50e-6}, Written{"50ppm/K", 50e-6}, Written{"±100 ppm/K", 1e-4},
+                             Written{"+/-1.5 ppm/K", 1.5e-6}, Written{"0.5 %/K", 0.005}, Written{"1e-4 1/K", 1e-4},
+                             Written{"0 ppm/K", 0}, Written{"50 ppm/\xE2\x84\xAA", 50e-6}}) {
+    INFO(row.text);
+    const auto read = read_per_kelvin(row.text, expected);
+    REQUIRE(read);
+    CHECK(*read == row.value);
+  }
+  CHECK(expected.empty());
+}
+
+TEST_CASE("what is no share for each kelvin is refused") {
+  for (const char* text : {"", "50", "ppm/K", "50 ppm", "5 %", "-50 ppm/K", "50 ppm/K each", "1,5 ppm/K", "nan ppm/K",
+                           "1e999 ppm/K", "±", "-0.5 %/K"}) {
+    INFO("\"" << text << "\"");
+    std::string expected;
+    CHECK_FALSE(read_per_kelvin(text, expected));
+    CHECK(expected == "a share for each kelvin such as 50 ppm/K or 0.5 %/K");
   }
 }

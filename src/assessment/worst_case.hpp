@@ -1,0 +1,17 @@
+// The extremes of figures over the box of all units.
+#pragma once
+
+#include <bandwright/assessment.hpp>
+
+namespace bandwright {
+
+struct WorstCaseOptions {
+  bool polish = true;  ///< false: corners only
+};
+
+/// Corner worst case of the figures asked for, the others left NaN. `sensitivities` at each condition of the
+/// population, `at_condition` the nominal unit's figures there.
+std::array<WorstCase, kFigureCount> worst_cases(const Population& population, const std::vector<Figure>& figures,
+                                                const WorstCaseOptions& options = {});
+
+}  // namespace bandwright

@@ -1,0 +1,62 @@
+#include "device/device_limits.hpp"
+
+#include <cmath>
+
+#include "numeric/elementary.hpp"
+
+namespace bandwright {
+
+namespace {
+
+// Spreads where no limit is published, as factors about the nominal value: assumed, no source.
+constexpr double kEarlyVoltage = 1.5;
+constexpr double kCapacitance = 1.3;
+constexpr double kTransition = 1.3;
+constexpr double kBaseResistance = 1.5;
+constexpr double kCutoffCurrent = 10;   // the nominal value is a tenth of a lone published max
+constexpr double kBaseEmitter = 0.040;  // V
+
+DeviceLimits about(double factor) { return {ln(factor), ln(factor), false}; }
+
+// The usual factor, but the published limit on the side where there is one beyond the nominal value.
+DeviceLimits by_ratio(double factor, double nominal, double min, double max) {
+  DeviceLimits l = about(factor);
+  if (min > 0 && min < nominal) l = {ln(nominal / min), l.above, true};
+  if (max > nominal) l = {l.below, ln(max / nominal), true};
+  return l;
+}
+
+DeviceLimits base_emitter(const ChosenPoint& point) {
+  DeviceLimits l{kBaseEmitter, kBaseEmitter, false};
+  const double nominal = point.nominal.value;
+  if (point.min < nominal) l = {nominal - point.min, l.above, true};
+  if (point.max > nominal) l = {l.below, point.max - nominal, true};
+  return l;
+}
+
+DeviceLimits cutoff(const ChosenPoint& point) {
+  if (!(point.nominal.value > 0)) return {};
+  if (!(point.max > point.nominal.value)) return about(kCutoffCurrent);
+  const double span = ln(point.max / point.nominal.value);
+  return {span, span, true};
+}
+
+}  // namespace
+
+std::array<DeviceLimits, kCauseCount> device_limits(const ChosenFigures& c) {
+  std::array<DeviceLimits, kCauseCount> limits{};
+  const auto of = [&limits](Cause cause) -> DeviceLimits& { return limits[index(cause)]; };
+  if (std::isfinite(c.early_voltage.value)) of(Cause::early_voltage) = about(kEarlyVoltage);
+  of(Cause::feedback_capacitance) =
+      by_ratio(kCapacitance, c.output_capacitance.nominal.value, kNotComputed, c.output_capacitance.max);
+  of(Cause::emitter_capacitance) =
+      by_ratio(kCapacitance, c.input_capacitance.nominal.value, kNotComputed, c.input_capacitance.max);
+  of(Cause::transition_frequency) = by_ratio(kTransition, c.transition.nominal.value, c.transition.min, kNotComputed);
+  of(Cause::base_resistance) = about(kBaseResistance);
+  of(Cause::cutoff_current) = cutoff(c.cutoff);
+  of(Cause::base_emitter_voltage) = base_emitter(c.base_emitter);
+  of(Cause::current_gain).published = !c.gain.max.empty();
+  return limits;
+}
+
+}  // namespace bandwright

@@ -1,0 +1,51 @@
+#include <fmt/format.h>
+
+#include <cmath>
+
+#include "report/candidate_sections.hpp"
+#include "report/shown_figures.hpp"
+
+namespace bandwright {
+
+namespace {
+
+// What the part must stand: a resistor's power, a capacitor's voltage.
+std::string rating_text(const Part& part) {
+  const bool resistor = info(part.role).kind == PartKind::resistor;
+  const double rating = resistor ? part.power_rating : part.voltage_rating;
+  if (!std::isfinite(rating)) return "none holds";
+  return rating == 0 ? "" : format_quantity(rating, resistor ? Dimension::power : Dimension::voltage);
+}
+
+std::vector<std::string> part_row(const Part& part) {
+  const RoleInfo& role = info(part.role);
+  const Dimension dimension = role.kind == PartKind::resistor ? Dimension::resistance : Dimension::capacitance;
+  return {role.designator,
+          role.label,
+          format_quantity(part.value, dimension),
+          part.code,
+          part.series.empty() ? "none" : part.series,
+          tolerance_text(part.tolerance),
+          short_family(part.family, part.role),
+          rating_text(part),
+          part.polarity};
+}
+
+}  // namespace
+
+void add_parts(TextSheet& sheet, const Candidate& candidate) {
+  sheet.heading("Parts");
+  TextGrid grid;
+  grid.columns = {{"part", false},      {"role", false},   {"value", true},   {"code", false},    {"series", false},
+                  {"tolerance", false}, {"family", false}, {"rating", false}, {"polarity", false}};
+  grid.flexible = {6, 1, 8};
+  for (const Part& part : candidate.parts) grid.add(part_row(part));
+  grid.add({"Q1", "transistor", candidate.device, "", "", "", candidate.parameters.pnp ? "PNP" : "NPN", "", ""});
+  sheet.grid(grid);
+  for (const Package& one : candidate.packages) {
+    const std::string note = one.note.empty() ? "" : "; " + one.note;
+    sheet.line(fmt::format("Q1 in {}: leads {}{} ({})", one.name, one.lead_order, note, describe(one.provenance)));
+  }
+}
+
+}  // namespace bandwright
