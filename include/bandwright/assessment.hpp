@@ -19,6 +19,9 @@
 
 namespace bandwright {
 
+/// A capability is capped here: beyond it nothing is known of so few units.
+inline constexpr double kHighestCapability = 2;
+
 /// Half-widths t_i of the causes, in the order of Sensitivity's columns.
 using CauseWidths = std::array<double, kCauseCount>;
 

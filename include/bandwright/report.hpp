@@ -55,4 +55,38 @@ struct Agreement {
 inline constexpr double kAgreementTolerance = 1e-9;
 Agreement compare(const StoredCandidate& stored, const Candidate& recomputed);
 
+/// One candidate of a result document to be set beside others: what the document states, nothing recomputed.
+struct ComparedCandidate {
+  std::string file;        ///< name of the document
+  std::size_t listed = 1;  ///< candidates in the document
+  Spec spec;               ///< requirements and conditions of the document
+  /// NaN, 0 units or empty where the document states nothing, with the reason in its notes. Filled are rank, best_at,
+  /// variant, device, parts, analysis.figures, error, tolerance_sensitivity, margins, shortfalls, notes, non_dominated
+  /// and assessment (always there): worst cases, capabilities, yield and verdict.
+  Candidate stated;
+};
+
+/// Candidates are named A to Z.
+inline constexpr std::size_t kMostCompared = 26;
+
+/// Reads the candidates of the given ranks from a result document; where no ranks are given its first, and up to four
+/// that are non-dominated or hold a title. Throws InputError with every fault of the document.
+std::vector<ComparedCandidate> read_compared(std::string_view json, std::string_view name,
+                                             const std::vector<int>& ranks);
+
+/// Two or more candidates beside each other.
+struct Comparison {
+  std::vector<ComparedCandidate> candidates;
+  std::vector<std::string> notes;  ///< how they were chosen
+};
+
+/// For people: what the choice is between, then measures, figures and the parts that differ.
+std::string write_comparison_table(const Comparison& comparison, const TableStyle& style = {});
+
+/// "bandwright/comparison" version 1.
+std::string write_comparison_json(const Comparison& comparison);
+
+/// One row a candidate, RFC 4180.
+std::string write_comparison_csv(const Comparison& comparison);
+
 }  // namespace bandwright

@@ -21,6 +21,8 @@ struct Moving {
   Circuit<Number> circuit;
   Bipolar<Number> device;
   Number junction;
+  BiasTrial<Number> trial;  ///< where the directions leave the operating point alone
+  bool bias_moves = false;
 };
 
 /// From the converged doubles one Newton step a crossing carries the exact derivative; the peak needs none, since |H|
@@ -35,14 +37,18 @@ BandOf<Number> exact_band(const Analysis& a, const Circuit<Number>& circuit, con
   return {square_root(gain_2), crossing(a.band.lower), crossing(a.band.upper)};
 }
 
-/// Figures in dual numbers; the operating point too takes one Newton step from the converged one.
+/// The operating point too takes one Newton step from the converged one.
+BiasTrial<Number> moved_trial(const Analysis& a, const Moving& unit) {
+  const Number log_start(ln(a.point.collector_current));
+  const BiasTrial<Number> start = bias_trial(unit.circuit, unit.device, log_start);
+  return bias_trial(unit.circuit, unit.device, log_start - start.residual / Number(first_value(start.slope)));
+}
+
+/// Figures in dual numbers.
 FigureArray<Number> dual_figures(const Stage& stage, const Analysis& a, const GainDefinition& definition,
                                  ResponseModel model, const Moving& unit) {
   const Bipolar<Number>& device = unit.device;
-  const Number log_start(ln(a.point.collector_current));
-  const BiasTrial<Number> start = bias_trial(unit.circuit, device, log_start);
-  const Number log_i_c = log_start - start.residual / Number(first_value(start.slope));
-  const BiasTrial<Number> t = bias_trial(unit.circuit, device, log_i_c);
+  const BiasTrial<Number> t = unit.bias_moves ? moved_trial(a, unit) : unit.trial;
   const HybridPi<Number> h = hybrid_pi(device, t.i_c, t.v_be, t.v_ce, t.gain);
   const Circuit<Number> driven = gain_circuit(unit.circuit, definition);
   BandOf<Number> band;
@@ -84,16 +90,23 @@ Bipolar<Number> standing(const Bipolar<double>& d) {
   return n;
 }
 
+BiasTrial<Number> standing(const BiasTrial<double>& t) {
+  return {Number(t.i_c),  Number(t.i_b),         Number(t.v_be),     Number(t.v_ce), Number(t.v_e),
+          Number(t.gain), Number(t.log_gain_25), Number(t.residual), Number(t.slope)};
+}
+
 /// A unit that stands, from which every pair of directions starts.
 struct StandingUnit {
   const UnitPoint& unit;
   Circuit<double> circuit;
   Bipolar<double> device;
+  BiasTrial<double> trial;
 
-  explicit StandingUnit(const UnitPoint& u)
+  StandingUnit(const UnitPoint& u, const Analysis& a)
       : unit(u),
         circuit(unit_circuit(u.stage, u.factors)),
-        device(at_temperature(*u.stage.device, u.junction, u.factors)) {}
+        device(at_temperature(*u.stage.device, u.junction, u.factors)),
+        trial(bias_trial(circuit, device, ln(a.point.collector_current))) {}
 };
 
 /// What a direction does to the circuit; the device follows where one of its causes or the junction moves.
@@ -120,20 +133,40 @@ bool moves_device(const Direction& d) {
   return false;
 }
 
+/// Resistors, supply, junction and the causes that hFE, VA, ICBO and VBE are.
+bool moves_bias(const Direction& d) {
+  if (d.supply != 0 || d.junction != 0) return true;
+  for (Cause c : {Cause::upper_divider, Cause::lower_divider, Cause::collector, Cause::emitter, Cause::emitter_bypassed,
+                  Cause::current_gain, Cause::early_voltage, Cause::cutoff_current, Cause::base_emitter_voltage}) {
+    if (d.factors[index(c)] != 0) return true;
+  }
+  return false;
+}
+
+/// The device of a unit whose directions move some of its causes, or the junction.
+Bipolar<Number> moved_device(const UnitPoint& unit, const std::vector<Direction>& directions, std::size_t first,
+                             const Number& junction) {
+  UnitFactors<Number> factors;
+  for (std::size_t i = index(Cause::current_gain); i <= index(Cause::base_emitter_voltage); ++i) {
+    factors.of[i] = Number(unit.factors.of[i]);
+    for (std::size_t lane = 0; lane < kDirections && first + lane < directions.size(); ++lane)
+      factors.of[i].slope.set(lane, directions[first + lane].factors[i]);
+  }
+  return at_temperature(*unit.stage.device, junction, factors);
+}
+
 /// The unit with as many directions in its slopes as there are lanes, from `first` on.
 Moving moving(const StandingUnit& from, const std::vector<Direction>& directions, std::size_t first) {
-  Moving m{standing(from.circuit), standing(from.device), Number(from.unit.junction)};
-  UnitFactors<Number> factors;
+  Moving m{standing(from.circuit), standing(from.device), Number(from.unit.junction), standing(from.trial), false};
   bool device_moves = false;
-  for (std::size_t i = 0; i < kCauseCount; ++i) factors.of[i] = Number(from.unit.factors.of[i]);
   for (std::size_t lane = 0; lane < kDirections && first + lane < directions.size(); ++lane) {
     const Direction& d = directions[first + lane];
     tilt(m.circuit, from.unit, d, lane);
     device_moves = device_moves || moves_device(d);
-    for (std::size_t i = 0; i < kCauseCount; ++i) factors.of[i].slope.set(lane, d.factors[i]);
+    m.bias_moves = m.bias_moves || moves_bias(d);
     m.junction.slope.set(lane, d.junction);
   }
-  if (device_moves) m.device = at_temperature(*from.unit.stage.device, m.junction, factors);
+  if (device_moves) m.device = moved_device(from.unit, directions, first, m.junction);
   return m;
 }
 
@@ -157,7 +190,7 @@ CauseSet all_causes() {
 std::vector<FigureValues> slopes(const UnitPoint& unit, const Analysis& analysis, const GainDefinition& definition,
                                  const std::vector<Direction>& directions, ResponseModel model) {
   std::vector<FigureValues> list(directions.size());
-  const StandingUnit from(unit);
+  const StandingUnit from(unit, analysis);
   for (std::size_t first = 0; first < directions.size(); first += kDirections) {
     const FigureArray<Number> f =
         dual_figures(unit.stage, analysis, definition, model, moving(from, directions, first));
@@ -176,14 +209,17 @@ Sensitivity sensitivity(const Stage& stage, const Analysis& analysis, const Gain
   for (auto& row : s) row.fill(active ? 0.0 : kNotComputed);
   if (!active) return s;
   UnitPoint unit{stage, {}, analysis.point.junction_temperature};
-  std::vector<Direction> directions;
   std::vector<std::size_t> columns;
-  for (std::size_t i = 0; i < kCauseCount; ++i) {
-    if (!wanted[i] || (is_part(i) && !(stage.parts[i] > 0))) continue;
-    Direction d;
-    d.factors[i] = i == index(Cause::base_emitter_voltage) ? stage.device->base_emitter_voltage : 1.0;
-    directions.push_back(d);
-    columns.push_back(i);
+  std::vector<Direction> directions;
+  for (bool bias : {true, false}) {  // pairs that leave the operating point alone are cheaper
+    for (std::size_t i = 0; i < kCauseCount; ++i) {
+      if (!wanted[i] || (is_part(i) && !(stage.parts[i] > 0))) continue;
+      Direction d;
+      d.factors[i] = i == index(Cause::base_emitter_voltage) ? stage.device->base_emitter_voltage : 1.0;
+      if (moves_bias(d) != bias) continue;
+      directions.push_back(d);
+      columns.push_back(i);
+    }
   }
   const std::vector<FigureValues> found = slopes(unit, analysis, definition, directions, model);
   for (std::size_t k = 0; k < columns.size(); ++k) {

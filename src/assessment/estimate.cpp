@@ -15,7 +15,6 @@ namespace {
 
 constexpr double kNormalReach = 0.98664;   // three sigma of a normal spread truncated at the tolerance, over it
 constexpr double kUniformReach = 1.73205;  // the same of a uniform one: sqrt(3)
-constexpr double kHighest = 2;
 constexpr double kLeastReach = 1e-6;
 
 double headroom_of(const NominalBias& bias) {
@@ -108,10 +107,18 @@ std::vector<LimitDistance> limit_distances(const Spec& spec, const Population& p
   return limit_distances(spec, nominal, sensitivity, spread, shifts);
 }
 
+std::vector<LimitDistance> moved(std::vector<LimitDistance> distances, const FigureValues& from,
+                                 const FigureValues& to) {
+  for (LimitDistance& d : distances) {
+    d.distance -= d.toward * d.per_ln * ln(to[index(d.figure)] / from[index(d.figure)]);
+  }
+  return distances;
+}
+
 double estimated_capability(const std::vector<LimitDistance>& distances) {
-  double least = kHighest;
+  double least = kHighestCapability;
   for (const LimitDistance& d : distances) {
-    if (std::isnan(d.distance)) return -kHighest;
+    if (std::isnan(d.distance)) return -kHighestCapability;
     least = std::min(least, d.capability());
   }
   return least;

@@ -45,7 +45,11 @@ std::vector<LimitDistance> limit_distances(const Spec& spec, const Analysis& nom
 std::vector<LimitDistance> limit_distances(const Spec& spec, const Population& population, const Analysis& nominal,
                                            const Sensitivity& sensitivity);
 
-/// The least of them, at most 2, as the simulated one.
+/// The distances of a stage whose figures differ, spread and shifts taken as the same.
+std::vector<LimitDistance> moved(std::vector<LimitDistance> distances, const FigureValues& from,
+                                 const FigureValues& to);
+
+/// The least of them, at most kHighestCapability, as the simulated one.
 double estimated_capability(const std::vector<LimitDistance>& distances);
 
 }  // namespace bandwright

@@ -14,7 +14,6 @@ namespace {
 constexpr std::size_t kQuantileUnits = 20000;  // from here on quantiles, below mean and 3 sigma
 constexpr std::size_t kMiddle = 50000;         // quantiles in 100,000ths
 constexpr std::size_t kLowTail = 135, kHighTail = 99865;
-constexpr double kHighestCapability = 2;
 constexpr double kNoSpread = 1e-12;  // a spread that is only rounding
 constexpr std::size_t kHistogramBins = 40;
 

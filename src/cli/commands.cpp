@@ -54,12 +54,22 @@ int print(const std::string& text) {
   return kMet;
 }
 
+// "design, check, compare or catalogue"
+std::string command_names(const std::vector<std::string>& more = {}) {
+  std::vector<std::string> names;
+  for (const Command& command : commands()) names.push_back(command.name);
+  names.insert(names.end(), more.begin(), more.end());
+  const std::string last = names.back();
+  names.pop_back();
+  return fmt::format("{} or {}", join(names, ", "), last);
+}
+
 int print_help(const std::vector<std::string>& topics) {
   if (topics.empty()) return print(overall_help());
   const Command* command = find_command(topics.front());
   if (command == nullptr || topics.size() > 1)
-    throw UsageError(fmt::format("no help on '{}'; expected one command: design, check or catalogue",
-                                 printable(topics[topics.size() > 1 ? 1 : 0])));
+    throw UsageError(fmt::format("no help on '{}'; expected one command: {}",
+                                 printable(topics[topics.size() > 1 ? 1 : 0]), command_names()));
   return print(command_help(*command));
 }
 
@@ -69,7 +79,8 @@ int print_help(const std::vector<std::string>& topics) {
   const bool option = word.starts_with("-");
   std::string text = fmt::format("unknown {} '{}'", option ? "option" : "command", printable(word));
   const std::string nearest = option ? "" : nearest_name(word, names);
-  text += nearest.empty() ? "; expected design, check, catalogue or help" : fmt::format("; did you mean {}?", nearest);
+  text += nearest.empty() ? fmt::format("; expected {}", command_names({"help"}))
+                          : fmt::format("; did you mean {}?", nearest);
   if (!option && nearest.empty() && word.ends_with(".json"))
     text += fmt::format(" (bandwright design {})", printable(word));
   throw UsageError(text);
@@ -88,7 +99,8 @@ int run_command(const Command& command, const std::vector<std::string>& words) {
 }
 
 int dispatch(const std::vector<std::string>& words) {
-  if (words.empty()) throw UsageError("no command; expected design, check, catalogue or help\nsee: bandwright help");
+  if (words.empty())
+    throw UsageError(fmt::format("no command; expected {}\nsee: bandwright help", command_names({"help"})));
   const std::string& first = words.front();
   const std::vector<std::string> rest(words.begin() + 1, words.end());
   if (first == "help" || first == "--help" || first == "-h") return print_help(rest);
@@ -106,7 +118,7 @@ int complaining(const std::string& lines, ExitStatus status) {
 }  // namespace
 
 const std::vector<Command>& commands() {
-  static const std::vector<Command> table = {design_command(), check_command(), catalogue_command()};
+  static const std::vector<Command> table = {design_command(), check_command(), compare_command(), catalogue_command()};
   return table;
 }
 

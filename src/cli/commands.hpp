@@ -34,6 +34,7 @@ int run(const std::vector<std::string>& words);
 // The rows of the table, each in a file of its own.
 Command design_command();
 Command check_command();
+Command compare_command();
 Command catalogue_command();
 
 }  // namespace bandwright::cli

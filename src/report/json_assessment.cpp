@@ -9,9 +9,9 @@ namespace bandwright {
 
 namespace {
 
-constexpr std::array kFields = {"spread_share", "worst_case", "spread",
-                                "capability",   "yield",      "verdict",
-                                "conditions",   "causes",     "temperature_coefficients"};
+constexpr std::array kFields = {
+    "spread_share", "worst_case", "spread", "worst_case_margin",       "capability", "yield",
+    "verdict",      "conditions", "causes", "temperature_coefficients"};
 
 constexpr std::array kScales = {"share", "logarithm", "volts"};  // in the order of CauseScale
 
@@ -189,6 +189,8 @@ void add_assessment_fields(Json& out, const Candidate& candidate, const Spec& sp
       by_figure_and_cause("spread_share", from.assessment.share, "no derivative exists", candidate, spec, notes);
   out["worst_case"] = worst_cases(from);
   out["spread"] = spreads(from);
+  out["worst_case_margin"] = from.number(from.assessment.worst_case_margin, "worst_case_margin",
+                                         "no requirement, or one whose figure has no worst case");
   out["capability"] = capabilities(from);
   out["yield"] = yields(from);
   out["verdict"] = verdict(from.assessment);

@@ -39,6 +39,7 @@ void add_parts(TextSheet& sheet, const Candidate& candidate) {
   grid.columns = {{"part", false},      {"role", false},   {"value", true},   {"code", false},    {"series", false},
                   {"tolerance", false}, {"family", false}, {"rating", false}, {"polarity", false}};
   grid.flexible = {6, 1, 8};
+  grid.dispensable = {4};
   for (const Part& part : candidate.parts) grid.add(part_row(part));
   grid.add({"Q1", "transistor", candidate.device, "", "", "", candidate.parameters.pnp ? "PNP" : "NPN", "", ""});
   sheet.grid(grid);

@@ -22,6 +22,9 @@ void add_ranking(TextSheet& sheet, const DesignResult& result);
 /// Parts, figures, spread of built units, operating point and pole model of one candidate.
 void add_candidate(TextSheet& sheet, const Candidate& candidate, const Spec& spec);
 
+/// What to mind before building, the same under every parts list.
+void add_cautions(TextSheet& sheet);
+
 /// False: no operating point in the active region, and so no figures.
 bool is_active(const Candidate& candidate);
 

@@ -83,7 +83,7 @@ std::string share_text(double share, int digits) {
 
 std::string counted(std::size_t units) {
   std::string text = std::to_string(units);
-  for (std::size_t end = text.size(); end > 3; end -= 3) text.insert(end - 3, ",");
+  for (std::size_t end = text.size(); end > 3; end -= 3) text.insert(end - 3, 1, ',');
   return text;
 }
 

@@ -38,7 +38,7 @@ std::string factors_text(const CauseSpread& spread) {
 
 std::string volts_text(const CauseSpread& spread) {
   const auto text = [](double volts) { return format_quantity(volts, Dimension::voltage, 3); };
-  if (spread.low() == -spread.high()) return "±" + text(spread.high());
+  if (spread.low() == -spread.high()) return fmt::format("±{}", text(spread.high()));
   return fmt::format("{} to {}{}", text(spread.low()), spread.high() > 0 ? "+" : "", text(spread.high()));
 }
 

@@ -74,8 +74,8 @@ std::vector<std::string> spread_row(const Assessment& assessment, const Candidat
 
 void add_rows(TextSheet& sheet, const Assessment& assessment, const Candidate& candidate, const Spec& spec) {
   TextGrid grid;
-  grid.columns = {{"figure", false}, {"nominal", true},    {"worst case", true},  {"RSS", true},
-                  {"sigma", true},   {"capability", true}, {"units failed", true}};
+  grid.columns = {{"figure", false}, {"nominal", true},    {"worst case", true}, {"RSS", true},
+                  {"sigma", true},   {"capability", true}, {"failed", true}};
   grid.flexible = {0, 3, 2};
   for (const Figure figure : bounded_figures(assessment, spec))
     grid.add(spread_row(assessment, candidate, info(figure), spec.requirement(figure).has_value()));
@@ -112,9 +112,10 @@ void add_spread(TextSheet& sheet, const Assessment& assessment, const Candidate&
   add_rows(sheet, assessment, candidate, spec);
   add_corners(sheet, assessment, spec);
   add_missing(sheet, assessment, spec);
-  sheet.line(
-      "worst case: every cause at its limits, at the worst supply and ambient; RSS: root sum of squares of the "
-      "causes' effects at their limits; sigma: over the units, at nominal.");
+  sheet.line(fmt::format(
+      "worst case: every cause at its limits, at the worst supply and ambient; RSS: root sum of squares of the causes' "
+      "effects at their limits; sigma: over the units, at nominal{}.",
+      any_required ? "; failed: units that miss the requirement at some condition" : ""));
 }
 
 }  // namespace bandwright

@@ -17,14 +17,6 @@ void add_list(TextSheet& sheet, const std::string& heading, const std::vector<st
   for (const std::string& item : items) sheet.item(item);
 }
 
-void add_cautions(TextSheet& sheet) {
-  sheet.heading("Before building");
-  sheet.line(
-      "At most 60 V DC between any two nodes, battery or certified isolated supply; mind polarity and rating; eye "
-      "protection at first power-up; discharge before touching; hot parts. A paper design: build and measure; not for "
-      "medical or safety use; local codes first. In full: README.md, Cautions.");
-}
-
 // How to see what the sheet leaves out.
 std::string closing_text(const DesignResult& result) {
   const std::string program = fmt::format("bandwright {}", version());
@@ -34,6 +26,14 @@ std::string closing_text(const DesignResult& result) {
 }
 
 }  // namespace
+
+void add_cautions(TextSheet& sheet) {
+  sheet.heading("Before building");
+  sheet.line(
+      "At most 60 V DC between any two nodes, battery or certified isolated supply; mind polarity and rating; eye "
+      "protection at first power-up; discharge before touching; hot parts. A paper design: build and measure; not for "
+      "medical or safety use; local codes first. In full: README.md, Cautions.");
+}
 
 bool any_requirement(const Spec& spec) {
   return std::any_of(spec.requirements.begin(), spec.requirements.end(), [](const auto& r) { return r.has_value(); });

@@ -50,23 +50,34 @@ std::size_t surplus(const Widths& widths, std::size_t page) {
   return total_width(widths) - std::min(total_width(widths), page);
 }
 
-void narrow(const TextGrid& grid, std::size_t page, Widths& widths) {
-  for (const std::size_t i : grid.flexible)
-    widths[i] -= std::min(surplus(widths, page), widths[i] - std::min(widths[i], kNarrowestCell));
+// The longest word of a column, which cannot be wrapped.
+std::size_t longest_word(const TextGrid& grid, std::size_t column) {
+  std::size_t longest = kNarrowestCell;
+  for (const auto& row : grid.rows)
+    for (const auto& word : wrap(row[column], 1)) longest = std::max(longest, text_width(word));
+  return longest;
 }
 
-// Widths of the columns on a page; 0 hides a column.
+void narrow_to(std::size_t floor, std::size_t page, std::size_t column, Widths& widths) {
+  widths[column] -= std::min(surplus(widths, page), widths[column] - std::min(widths[column], floor));
+}
+
+Widths with_whole_words(const TextGrid& grid, std::size_t page, Widths widths) {
+  for (const std::size_t i : grid.flexible) narrow_to(longest_word(grid, i), page, i, widths);
+  return widths;
+}
+
+// Widths of the columns on a page; 0 hides a column. Where all else is not enough, words reach over into the gap.
 Widths column_widths(const TextGrid& grid, std::size_t page) {
   Widths all = natural_widths(grid);
-  Widths narrowed = all;
-  narrow(grid, page, narrowed);
+  Widths widths = with_whole_words(grid, page, all);
   for (const std::size_t i : grid.dispensable) {
-    if (surplus(narrowed, page) == 0) break;
+    if (surplus(widths, page) == 0) break;
     all[i] = 0;
-    narrowed = all;
-    narrow(grid, page, narrowed);
+    widths = with_whole_words(grid, page, all);
   }
-  return narrowed;
+  for (const std::size_t i : grid.flexible) narrow_to(kNarrowestCell, page, i, widths);
+  return widths;
 }
 
 // One row of cells as as many lines as its tallest cell needs.

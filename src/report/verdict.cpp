@@ -10,6 +10,8 @@ namespace bandwright {
 
 namespace {
 
+constexpr double kHighestCapability = 2;  // it is counted up to here only
+
 std::string verdict_text(const DesignResult& result) {
   const std::size_t all = result.candidates.size();
   const auto meeting = std::count_if(result.candidates.begin(), result.candidates.end(),
@@ -47,6 +49,8 @@ std::string limiting_text(const Assessment& assessment, const Spec& spec) {
                        cause_text(assessment, *failed));
   const auto nearest = least_capable(assessment, spec);
   if (!nearest) return "";
+  if (assessment.spread[index(*nearest)].capability >= kHighestCapability)
+    return "every requirement is far from its limits";
   return fmt::format("{} comes nearest to its limit, capability {}{}", info(*nearest).label,
                      capability_text(assessment.spread[index(*nearest)].capability, assessment),
                      cause_text(assessment, *nearest));

@@ -17,7 +17,7 @@ namespace {
 
 constexpr int kRounds = 3;
 constexpr int kSteps = 25;              // evaluations at most in one round
-constexpr double kHighest = 4;          // of the least distance in spreads: beyond this nothing is won
+constexpr double kMostDistance = 4;     // of the least distance in spreads: beyond this nothing is won
 constexpr double kDistance = 1.05;      // the conditions of the search are kept this factor inside
 constexpr std::size_t kConditions = 2;  // of the search: VCE and IC RC
 
@@ -43,7 +43,7 @@ public:
     }
     x.push_back(estimated_capability(from_.distances));
     low.push_back(-1e3);
-    high.push_back(kHighest);
+    high.push_back(kMostDistance);
     best_ = stage_.parts;
     nlopt::opt optimiser(nlopt::LD_SLSQP, static_cast<unsigned>(x.size()));
     optimiser.set_lower_bounds(low);
@@ -79,12 +79,12 @@ private:
       return;
     }
     const Sensitivity s = sensitivity(stage_, a, definition_);
-    double least = kHighest;
-    for (std::size_t i = 0; i < from_.distances.size(); ++i) {
-      const LimitDistance& d = from_.distances[i];
+    double least = kMostDistance;
+    const std::vector<LimitDistance> here = moved(from_.distances, from_.analysis.figures, a.figures);
+    for (std::size_t i = 0; i < here.size(); ++i) {
+      const LimitDistance& d = here[i];
       const std::size_t f = index(d.figure);
-      const double moved = ln(a.figures[f] / from_.analysis.figures[f]);
-      const double t = (d.distance - d.toward * d.per_ln * moved) / d.reach;
+      const double t = d.capability();
       least = std::min(least, t);
       result[i] = x[free_.size()] - t;
       if (gradient == nullptr) continue;

@@ -31,6 +31,7 @@ struct DesignSpaces {
   std::vector<DesignSpace> spaces;
 };
 
+/// The spaces point into `devices`, which must outlive them.
 DesignSpaces design_spaces(const Spec& spec, const Catalogue& catalogue, const std::vector<DerivedDevice>& devices);
 
 /// The values at work; 0 where absent.

@@ -183,6 +183,12 @@ Evaluator::Outlook Evaluator::outlook(const GridPoint& point) {
   return o;
 }
 
+double Evaluator::capability_near(const GridPoint& point, const Outlook& from) {
+  const Analysis a = analysis(point);
+  if (a.point.state != BiasState::active) return -kWorstError;
+  return estimated_capability(moved(from.distances, from.analysis.figures, a.figures));
+}
+
 /// Tolerance sensitivity and, where the order asks for it, the estimated capability.
 void Evaluator::look_ahead(const GridPoint& point, Known& k) {
   const bool by_capability = wants_capability(by_);

@@ -41,6 +41,9 @@ public:
   };
   Outlook outlook(const GridPoint& point);
 
+  /// The capability of a point near `from`, as if all figures spread and shifted as they do there.
+  double capability_near(const GridPoint& point, const Outlook& from);
+
   const DesignSpace& space() const { return space_; }
   std::size_t evaluations() const { return evaluations_; }  ///< analyses made, not remembered ones
 

@@ -1,6 +1,7 @@
 #include "search/refinement.hpp"
 
 #include <algorithm>
+#include <cmath>
 
 #include "numeric/random.hpp"
 
@@ -12,6 +13,8 @@ constexpr int kSteps[] = {-1, 1, -2, 2};
 constexpr int kLargestKick = 2;   // values a kicked part moves at most
 constexpr int kFewestKicked = 2;  // parts in one kick
 constexpr int kMostKicked = 4;
+// One or two values of one or two parts change the reach of a figure's spread by less than this share.
+constexpr double kSpreadMoves = 0.25;
 constexpr int kPatience = 10;                    // kicks without a gain before another optimum is taken up
 constexpr std::size_t kTakenUp = 12;             // of the best optima, to go on from
 constexpr std::size_t kEvaluationsPerKick = 40;  // at least: a small space is known whole before its budget is spent
@@ -29,10 +32,32 @@ bool step(const DesignSpace& space, GridPoint& p, int role, int by) {
   return p[role] >= 0 && p[role] < static_cast<int>(space.offered[role]->size());
 }
 
-/// The sensitivity is computed only where the error alone does not decide.
-bool improves(Evaluator& evaluator, const GridPoint& p, const Ranked& current, RankBy by) {
-  const int a = leading_class(evaluator.error(p), by), b = leading_class(current.key.error, by);
-  return a != b ? a < b : comes_before(evaluator.key(p), current.key, by);
+/// The stage from which neighbours are judged: where the capability is sought, with its distances from the limits.
+struct Base {
+  Ranked ranked;
+  Evaluator::Outlook outlook;
+
+  Base(Evaluator& evaluator, const Ranked& r, RankBy by) : ranked(r) {
+    if (wants_capability(by) && r.key.meets()) outlook = evaluator.outlook(r.point);
+  }
+};
+
+/// True where a neighbour that meets the spec cannot come before the base, whatever its sensitivities are.
+bool is_hopeless(Evaluator& evaluator, const GridPoint& p, double error, const Base& base) {
+  const RankKey& key = base.ranked.key;
+  if (key.capability >= kHighestCapability) return error_class(error) > error_class(key.error);
+  return !base.outlook.distances.empty() &&
+         evaluator.capability_near(p, base.outlook) < key.capability - kSpreadMoves * std::fabs(key.capability);
+}
+
+/// Sensitivities are computed only where the error alone does not decide.
+bool improves(Evaluator& evaluator, const GridPoint& p, const Base& base, RankBy by) {
+  const RankKey& key = base.ranked.key;
+  const double error = evaluator.error(p);
+  const int a = leading_class(error, by), b = leading_class(key.error, by);
+  if (a != b) return a < b;
+  if (wants_capability(by) && key.meets() && is_hopeless(evaluator, p, error, base)) return false;
+  return comes_before(evaluator.key(p), key, by);
 }
 
 GridPoint kicked(const DesignSpace& space, const std::vector<std::int8_t>& roles_free, GridPoint p,
@@ -73,24 +98,25 @@ bool Neighbourhood::apply(const DesignSpace& space, const Move& m, GridPoint& p)
 
 Ranked Neighbourhood::refine(Evaluator& evaluator, const GridPoint& start, RankBy by,
                              const std::function<bool()>& stop) const {
-  Ranked best{start, evaluator.key(start)};
+  Base best(evaluator, {start, evaluator.key(start)}, by);
   std::size_t next = 0;
   for (std::size_t left = moves_.size(); left > 0; --left) {
     const Move& move = moves_[next];
     next = (next + 1) % moves_.size();
     if (next % 64 == 0 && stop && stop()) break;
-    GridPoint p = best.point;
+    GridPoint p = best.ranked.point;
     if (!apply(evaluator.space(), move, p) || !improves(evaluator, p, best, by)) continue;
-    best = {p, evaluator.key(p)};
+    best = Base(evaluator, {p, evaluator.key(p)}, by);
     left = moves_.size() + 1;  // every move is open again
   }
-  return best;
+  return best.ranked;
 }
 
 bool Neighbourhood::is_best(Evaluator& evaluator, const Ranked& point, RankBy by) const {
+  const Base base(evaluator, point, by);
   return std::none_of(moves_.begin(), moves_.end(), [&](const Move& m) {
     GridPoint p = point.point;
-    return apply(evaluator.space(), m, p) && improves(evaluator, p, point, by);
+    return apply(evaluator.space(), m, p) && improves(evaluator, p, base, by);
   });
 }
 

@@ -31,7 +31,7 @@ constexpr std::size_t kKeptOptima = 24;      // of one space
 constexpr std::size_t kExactBudget = 120000;   // kicks that look for them
 constexpr std::size_t kCentredSpaces = 16;     // centred and refined
 constexpr std::size_t kCentredInSpace = 3;     // starts of the centring
-constexpr std::size_t kCentredBudget = 60000;  // kicks after the centring, over all spaces
+constexpr std::size_t kCentredBudget = 120000;  // kicks after the centring, over all spaces
 
 /// Runs tasks on TBB's threads, each writing its own slot, so that the answer does not depend on their number.
 class Workers {

@@ -80,7 +80,7 @@ TEST_CASE("the same bytes on any number of threads, and twice") {
 
 TEST_CASE("option --rank sensitivity puts the least sensitive first") {
   const Json document = Json::parse(design_easy({"--rank", "sensitivity", "--format", "json"}).out);
-  CHECK(document["ranked_by"] == "tolerance_sensitivity");
+  CHECK(document["ranked_by"] == "sensitivity");
 }
 
 TEST_CASE("a supply above 60 V is refused unless it is allowed") {

@@ -29,14 +29,14 @@ TEST_CASE("the version is that of the library") {
 
 TEST_CASE("help names every command and every exit status") {
   const std::string text = helped({"--help"}).out;
-  for (const char* piece : {"design", "check", "catalogue", "--version", "130"})
+  for (const char* piece : {"design", "check", "compare", "catalogue", "--version", "130"})
     CHECK_THAT(text, ContainsSubstring(piece));
   CHECK(helped({"help"}).out == text);
   CHECK(helped({"-h"}).out == text);
 }
 
 TEST_CASE("help of a command is the same on every way to it") {
-  for (const char* command : {"design", "check", "catalogue"}) {
+  for (const char* command : {"design", "check", "compare", "catalogue"}) {
     const std::string text = helped({"help", command}).out;
     CHECK_THAT(text, StartsWith(std::string("bandwright ") + command));
     CHECK(helped({command, "--help"}).out == text);
@@ -56,6 +56,9 @@ TEST_CASE("help lists every key of the spec and every option") {
                              "--allow-high-voltage", "--quiet"})
     CHECK_THAT(design, ContainsSubstring(option));
   for (const bandwright::RoleInfo& role : bandwright::roles()) CHECK_THAT(check, ContainsSubstring(role.designator));
+  const std::string compare = helped({"help", "compare"}).out;
+  for (const char* option : {"--pick", "--format", "--output", "--quiet"})
+    CHECK_THAT(compare, ContainsSubstring(option));
   for (const char* option : {"--pick", "--device", "--upper-divider", "--emitter-bypassed", "--shunt"})
     CHECK_THAT(check, ContainsSubstring(option));
 }

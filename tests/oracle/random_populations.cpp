@@ -1,5 +1,6 @@
 #include "random_populations.hpp"
 
+#include <algorithm>
 #include <bandwright/assessment.hpp>
 #include <bandwright/catalogue.hpp>
 #include <cmath>

@@ -68,7 +68,8 @@ SmallProblem small_problem(std::uint64_t seed) {
     p.spec = random_spec(random);
     p.device = derive_parameters(*types[random.below(static_cast<int>(types.size()))]);
     if (p.device.parameters.breakdown_voltage < p.spec.highest_supply()) continue;
-    const DesignSpaces wide = design_spaces(p.spec, catalogue, {p.device});
+    const std::vector<DerivedDevice> devices = {p.device};  // the spaces point into it
+    const DesignSpaces wide = design_spaces(p.spec, catalogue, devices);
     const DesignSpace& split = wide.spaces[3];  // split emitter with shunt: every role
     Choices choices;
     for (double& c : choices) c = random.uniform();
@@ -89,7 +90,7 @@ SmallProblem small_problem(std::uint64_t seed) {
       const double half = i < kResistorRoles ? width : 1.9;
       p.spec.parts.ranges[i] = ValueRange{centre[i] / half, centre[i] * half};
     }
-    p.combinations = combinations(design_spaces(p.spec, catalogue, {p.device}));
+    p.combinations = combinations(design_spaces(p.spec, catalogue, devices));
     if (p.combinations > 2e4 && p.combinations <= kMostCombinations) return p;
   }
 }

@@ -37,6 +37,9 @@ TEST_CASE("the second line says what limits the first candidate") {
   for (FigureSpread& spread : first_assessment(result).spread) spread.failed = 0;
   CHECK_THAT(write_table(result, kWide), ContainsSubstring("lower cutoff comes nearest to its limit, capability 0.81; "
                                                            "C3 makes 61 % of its spread.\n"));
+  for (FigureSpread& spread : first_assessment(result).spread) spread.capability = 2;
+  CHECK_THAT(write_table(result, kWide),
+             ContainsSubstring("yield 99.2 %; every requirement is far from its limits.\n"));
   first_assessment(result).yield.not_active = 160;
   first_assessment(result).yield.least_active_at = 1;
   CHECK_THAT(write_table(result, kWide), ContainsSubstring("most units that fail are not active at 0 °C, 11.4 V.\n"));
@@ -195,5 +198,5 @@ TEST_CASE("without a requirement units are only active or not") {
   result.spec.requirements = {};
   const std::string text = write_table(result, kWide);
   CHECK_THAT(text, ContainsSubstring("19,840 of 20,000 units are active at nominal and at four corners"));
-  CHECK_THAT(text, !ContainsSubstring("Verdict") && !ContainsSubstring("As built"));
+  CHECK_THAT(text, !ContainsSubstring("Verdict") && !ContainsSubstring("As built") && !ContainsSubstring("failed:"));
 }

@@ -42,6 +42,12 @@ TEST_CASE("the flexible column gives way on a narrow page") {
   CHECK(grid.lines(80).body.size() == 1);
 }
 
+TEST_CASE("columns keep their longest word while another can give way") {
+  TextGrid grid{{{"", false}, {"", false}}, {}, {0, 1}};
+  grid.add({"collector-emitter voltage", "a text of several short words"});
+  CHECK(grid.lines(40).body == Lines{"collector-emitter  a text of several", "voltage            short words"});
+}
+
 TEST_CASE("dispensable columns are left out where wrapping is not enough, first one first") {
   TextGrid grid{{{"text", false}, {"one", true}, {"two", true}}, {}, {0}, {2, 1}};
   grid.add({"words to be wrapped", "1.000", "2.000"});
@@ -58,9 +64,10 @@ TEST_CASE("a grid without rows prints nothing") {
 }
 
 TEST_CASE("headings are wrapped as paragraphs are") {
+  const std::string first(50, 'a'), second(50, 'b');
   TextSheet sheet{{false, 60}};
-  sheet.heading(std::string(50, 'a') + " " + std::string(50, 'b'));
-  CHECK(sheet.text() == std::string(50, 'a') + "\n" + std::string(50, 'b') + "\n");
+  sheet.heading(join({first, second}, " "));
+  CHECK(sheet.text() == join({first, second, ""}, "\n"));
 }
 
 TEST_CASE("space is never doubled") {
