@@ -172,6 +172,48 @@ T probed(const Transfer<T>& h, const Probe& probe, const T& u_peak, const T& lev
   return gain_squared(h, u) / level;
 }
 
+/// Peak and crossings of a pack.
+template <class T>
+struct SettledBand {
+  Settling<T> peak;
+  Settling<T> lower{T(kNotComputed), T(0.0)};  ///< 1/u
+  Settling<T> upper{T(kNotComputed), T(0.0)};  ///< u
+  T u_peak, highest;                           ///< omega squared and |H|^2 at the peak
+  T gain_2;                                    ///< A^2
+
+  BandOf<T> band() const { return {square_root(gain_2), hertz(T(1.0) / lower.x), hertz(upper.x)}; }
+
+  /// Settled, the gain's frequency inside the pass band, each crossing on its own side of the peak: in a narrow band a
+  /// step may leap over it.
+  bool holds(std::size_t i, bool crossings) const {
+    if (is_open(peak, i) || 2 * lane(gain_2, i) < lane(highest, i)) return false;
+    if (!crossings) return true;
+    const double u = lane(u_peak, i);
+    return !is_open(lower, i) && !is_open(upper, i) && lane(lower.x, i) * u > 1 && lane(upper.x, i) > u;
+  }
+};
+
+template <class T>
+SettledBand<T> settle_band(const Transfer<T>& response, const WarmStart& from, double frequency, bool crossings) {
+  SettledBand<T> s;
+  s.peak = settle_peak(response, from);
+  s.u_peak = square_root(larger(s.peak.x, T(0.0)));
+  s.highest = gain_squared(response, s.u_peak);
+  s.gain_2 = frequency > 0 ? gain_squared(response, T(omega_squared(frequency))) : s.highest;
+  if (!crossings) return s;
+  const T level = T(0.5) * s.gain_2;
+  s.lower = settle_crossing(response, level, from.lower, true);
+  s.upper = settle_crossing(response, level, from.upper, false);
+  return s;
+}
+
+/// True where a pack's lane is in the active region.
+template <class T>
+bool is_active(const Bipolar<T>& device, const BiasTrial<T>& t, std::size_t i) {
+  const double needed = larger(device.sheet->saturation_voltage + kActiveMargin, lane(t.v_be, i));
+  return lane(t.v_ce, i) >= needed && lane(t.i_c, i) >= kLeakageRatio * lane(device.cutoff_current, i);
+}
+
 /// One pack of units at one condition; figures only of those that are solved and active.
 template <class T>
 void solve_at(const UnitTask& task, const WarmStart& from, const UnitDraw<T>& unit, std::size_t condition,
@@ -184,37 +226,19 @@ void solve_at(const UnitTask& task, const WarmStart& from, const UnitDraw<T>& un
   const BiasTrial<T> t = bias_trial(circuit, device, current.x);
   const HybridPi<T> h = hybrid_pi(device, t.i_c, t.v_be, t.v_ce, t.gain);
   const Transfer<T> response = transfer(gain_circuit(circuit, p.definition), h);
-  const Settling<T> peak = settle_peak(response, from);
-  const T u_peak = square_root(larger(peak.x, T(0.0)));
-  const T highest = gain_squared(response, u_peak);
-  const bool at_peak = !(p.definition.frequency > 0);
-  const T gain_2 = at_peak ? highest : gain_squared(response, T(omega_squared(p.definition.frequency)));
-  const T level = T(0.5) * gain_2;
-  Settling<T> lower{T(kNotComputed), T(0.0)}, upper = lower;
-  if (task.crossings) {
-    lower = settle_crossing(response, level, from.lower, true);
-    upper = settle_crossing(response, level, from.upper, false);
-  }
-  const BandOf<T> band{square_root(gain_2), hertz(T(1.0) / lower.x), hertz(upper.x)};
+  const SettledBand<T> settled = settle_band(response, from, p.definition.frequency, task.crossings);
 
-  const T needed = larger(T(p.device.saturation_voltage + kActiveMargin), t.v_be);
-  const T leakage = T(kLeakageRatio) * device.cutoff_current;
+  Outcome* outcomes = task.outcomes + condition * task.stride + first;
   for (std::size_t i = 0; i < kLaneCount<T> && first + i < task.units; ++i) {
-    Outcome& outcome = task.outcomes[condition * task.stride + first + i];
-    const bool in_band = 2 * lane(gain_2, i) >= lane(highest, i);
-    if (is_open(current, i)) {
-      outcome = Outcome::unsolved;
-    } else if (lane(t.v_ce, i) < lane(needed, i) || lane(t.i_c, i) < lane(leakage, i)) {
-      outcome = Outcome::not_active;
-    } else {
-      const bool solved = in_band && !is_open(peak, i) && !is_open(lower, i) && !is_open(upper, i);
-      outcome = solved ? Outcome::active : Outcome::unsolved;
-    }
+    const bool found = !is_open(current, i);
+    outcomes[i] = found && settled.holds(i, task.crossings) ? Outcome::active : Outcome::unsolved;
+    if (found && !is_active(device, t, i)) outcomes[i] = Outcome::not_active;
   }
   for (std::size_t k = 0; k < task.probe_count; ++k) {
-    const T ratio = probed(response, task.probes[k], u_peak, level);
+    const T ratio = probed(response, task.probes[k], settled.u_peak, T(0.5) * settled.gain_2);
     store(ratio, task, task.ratios + (condition * task.probe_count + k) * task.stride, first);
   }
+  const BandOf<T> band = settled.band();
   FigureArray<T> f;
   if (task.band_only) {
     f[index(Figure::gain)] = band.gain;

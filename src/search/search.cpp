@@ -28,9 +28,9 @@ constexpr std::size_t kKickedSpaces = 8;     // of the most promising, searched 
 constexpr std::size_t kKickBudget = 400000;  // analyses, over all of them
 constexpr std::size_t kKeptOptima = 24;      // of one space
 // Where the most producible stages are sought, the most exact ones are where the centring starts.
-constexpr std::size_t kExactBudget = 120000;   // kicks that look for them
-constexpr std::size_t kCentredSpaces = 16;     // centred and refined
-constexpr std::size_t kCentredInSpace = 3;     // starts of the centring
+constexpr std::size_t kExactBudget = 120000;    // kicks that look for them
+constexpr std::size_t kCentredSpaces = 16;      // centred and refined
+constexpr std::size_t kCentredInSpace = 3;      // starts of the centring
 constexpr std::size_t kCentredBudget = 120000;  // kicks after the centring, over all spaces
 
 /// Runs tasks on TBB's threads, each writing its own slot, so that the answer does not depend on their number.
