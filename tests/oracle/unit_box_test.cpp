@@ -27,8 +27,6 @@ namespace {
 // Differences of a hundred-thousandth of a range, an error of their square taken out: figures good to 1e-14 leave 1e-8.
 constexpr double kStep = 1e-5;
 constexpr double kSlope = 1e-6;  // of ln y over a whole range
-constexpr double kQuantile =
-    0.999;  // the rest stands at kinks and plateaus, which the test of sensitivities leaves out
 constexpr int kStages = 100;
 
 /// A coordinate of the box: a cause's share, supply or ambient as a share of 1 V and 1 K.
@@ -95,5 +93,6 @@ TEST_CASE("slopes over the box of all units against differences", "[oracle][sens
     }
   }
   std::cout << "  " << slopes.summary() << " in " << slopes.worst_where() << "\n";
-  CHECK(slopes.quantile(kQuantile) <= kSlope);
+  INFO(slopes.summary() << " in " << slopes.worst_where());
+  CHECK(slopes.worst() <= kSlope);
 }

@@ -1,11 +1,10 @@
-// The corner worst case against units: simulated ones by the million, and corners of the box that are sought out
-// without any slope. The slopes that it climbs by against differences, anywhere in the box.
+// The corner worst case against units: simulated ones by the million, and corners of the box that are sought out one
+// cause at a time, without any slope.
 #include "assessment/worst_case.hpp"
 
 #include <fmt/format.h>
 
 #include <algorithm>
-#include <chrono>
 #include <cmath>
 #include <iostream>
 #include <map>
