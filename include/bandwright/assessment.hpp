@@ -105,7 +105,7 @@ struct Assessment {
   double worst_case_margin = kNotComputed;  ///< the smallest margin over the requirements at their worst corners
   bool nominal_met = false;
   bool worst_case_met = false;             ///< every requirement holds at its worst corner
-  std::string verdict;                     ///< "pass", "pass with notes" or "not met"
+  std::string verdict;                     ///< "pass", "pass with notes" or "not met"; empty where nothing is required
   ResponseCurve response;                  ///< filled on request only
   std::vector<NodeVoltage> node_voltages;  ///< filled on request only
 };

@@ -110,9 +110,10 @@ Json yields(const Assessed& from) {
   return out;
 }
 
-Json verdict(const Assessment& assessment) {
-  return {
-      {"nominal", assessment.nominal_met}, {"worst_case", assessment.worst_case_met}, {"overall", assessment.verdict}};
+Json verdict(const Assessed& from) {
+  const Assessment& a = from.assessment;
+  if (a.verdict.empty()) return from.notes.nothing("verdict", "no requirement was stated");
+  return {{"nominal", a.nominal_met}, {"worst_case", a.worst_case_met}, {"overall", a.verdict}};
 }
 
 Json condition(const Assessed& from, std::size_t position) {
@@ -193,7 +194,7 @@ void add_assessment_fields(Json& out, const Candidate& candidate, const Spec& sp
                                          "no requirement, or one whose figure has no worst case");
   out["capability"] = capabilities(from);
   out["yield"] = yields(from);
-  out["verdict"] = verdict(from.assessment);
+  out["verdict"] = verdict(from);
   out["conditions"] = conditions(from);
   out["causes"] = cause_rows(from);
   out["temperature_coefficients"] = temperature_coefficients(from);

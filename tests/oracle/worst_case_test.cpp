@@ -54,6 +54,7 @@ struct Findings {
   std::map<std::string, int> reasons;
   std::size_t active = 0;
   int losing = 0;
+  double nearest = -1e300;  ///< largest excess beyond the worst case, negative inside
 };
 
 /// The largest excess of a figure over the active units of a block; NaN where one of them has no value.
@@ -102,6 +103,7 @@ void compare_stage(int stage, const Population& p, Findings& f) {
       CHECK(p.definition.frequency > 0);
       continue;
     }
+    f.nearest = std::max(f.nearest, found);
     f.polished.add(std::max(found, 0.0), where);
     f.corners.add(std::max(largest_excess(block, p.conditions.size(), k, corners[index(kBand[k])]), 0.0), where);
   }
@@ -112,6 +114,7 @@ void report(const Findings& f) {
                            f.active);
   for (const auto& [reason, count] : f.reasons) std::cout << fmt::format("  without one, {}: {}\n", reason, count);
   std::cout << fmt::format("  stages in which a unit lacks a cutoff that all corners have: {}\n", f.losing);
+  std::cout << fmt::format("  the outermost unit, in ln y: {:.1e}\n", f.nearest);
   for (const Agreement* a : {&f.polished, &f.corners})
     std::cout << "  " << a->summary() << " in " << a->worst_where() << "\n";
 }
