@@ -7,6 +7,7 @@
 
 #include "from_memory.hpp"
 #include "numeric/elementary.hpp"
+#include "units/constants.hpp"
 
 namespace bandwright {
 
@@ -43,17 +44,19 @@ std::vector<std::string> general_assumptions(const Spec& spec) {
           " and IC RC of at least " + format_quantity(kLeastCollectorDrop, Dimension::voltage) +
           ", within the transistor's limits, each part with a rating that holds",
       "ratings: DC voltage at the highest supply with nominal parts; no worst case yet"};
-  if (spec.ambient.nominal < 293.15)
+  if (spec.ambient.nominal < kColdBegins)
     list.push_back("electrolytics lose 0.5 % for each kelvin below 20 °C (from memory)");
   return list;
 }
 
-CauseWidths widths_of(const OfferedParts& parts, const BipolarParameters& device, double collector_current) {
+CauseWidths widths_of(const Spec& spec, const OfferedParts& parts, const BipolarParameters& device,
+                      double collector_current) {
   CauseWidths w{};
   for (std::size_t i = 0; i < kRoleCount; ++i) {
-    if (parts[i].value > 0) w[i] = half_width(parts[i].tolerance);
+    if (parts[i].value > 0) w[i] = assessed_half_width(spec, static_cast<Cause>(i), half_width(parts[i].tolerance));
   }
-  w[index(Cause::current_gain)] = gain_half_width(device, collector_current);
+  w[index(Cause::current_gain)] =
+      assessed_half_width(spec, Cause::current_gain, gain_half_width(device, collector_current));
   return w;
 }
 
@@ -140,7 +143,7 @@ Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogu
   c.shortfalls = shortfalls(spec, c.analysis.figures);
   if (c.analysis.point.state == BiasState::active) {
     const double i_c = c.analysis.point.collector_current;
-    c.tolerance_sensitivity = tolerance_sensitivity(spec, c.sensitivity, widths_of(parts, c.parameters, i_c));
+    c.tolerance_sensitivity = tolerance_sensitivity(spec, c.sensitivity, widths_of(spec, parts, c.parameters, i_c));
     c.gain_limits = gain_limits(c.parameters, i_c);
   }
   std::string reason;

@@ -15,8 +15,8 @@ constexpr std::size_t kSpare = 6;  // finalists beyond those listed: the simulat
 bool is_active(const Candidate& c) { return c.analysis.point.state == BiasState::active; }
 
 std::size_t most_exact(const std::vector<Standing>& list) {
-  const auto best = std::min_element(
-      list.begin(), list.end(), [](const Standing& a, const Standing& b) { return comes_before(a, b, RankBy::error); });
+  const auto best = std::min_element(list.begin(), list.end(),
+                                     [](const Standing& a, const Standing& b) { return a.key.error < b.key.error; });
   return static_cast<std::size_t>(best - list.begin());
 }
 
@@ -66,6 +66,9 @@ void rank(DesignResult& result, std::vector<Candidate> finalists) {
   if (std::find(order.begin(), order.end(), exact) == order.end()) {
     if (order.size() == listed && listed > 1) order.pop_back();
     if (order.size() < listed) order.push_back(exact);
+    std::stable_sort(order.begin(), order.end(), [&](std::size_t a, std::size_t b) {
+      return comes_before(standings[a], standings[b], result.ranked_by);
+    });
   }
   std::vector<Standing> kept;
   for (std::size_t i : order) kept.push_back(standings[i]);

@@ -33,6 +33,9 @@ std::array<double, 2> gain_limits(const BipolarParameters& device, double collec
 /// ln(max/min)/2 of beta0 at a collector current.
 double gain_half_width(const BipolarParameters& device, double collector_current);
 
+/// The half-width that the spec gives to a part or to hFE in place of the usual one; 0 where it is switched off.
+double assessed_half_width(const Spec& spec, Cause cause, double usual);
+
 /// Largest over the required figures of sqrt(sum (S_i t_i)^2)/w over parts and hFE: t_i the relative tolerance of part
 /// i (hFE: ln(max/min)/2; asymmetric -a/+b: ln((1+b)/(1-a))/2), w the half-width of the requirement's window in ln x. 1
 /// means that the root sum of squares alone fills the window.
@@ -42,7 +45,10 @@ double tolerance_sensitivity(const Spec& spec, const Sensitivity& sensitivity, c
 Population population_of(const Spec& spec, const BipolarParameters& device, const OfferedParts& parts,
                          const Analysis& nominal);
 
-/// "nominal", or "60 °C, 11.4 V".
+/// "60 °C, 11.4 V", the supply with its sign.
+std::string condition_text(const Population& population, const OperatingCondition& condition);
+
+/// "nominal", or the condition's text.
 std::string condition_name(const Population& population, std::size_t condition);
 
 /// Extremes of one figure. NaN where a corner is not active, or the figure has no value there; `reason` says which.

@@ -30,7 +30,8 @@ struct GainCurve {
 struct DeviceLimits {
   double below = 0;
   double above = 0;
-  bool published = false;  ///< false: assumed
+  bool below_published = false;  ///< false: assumed
+  bool above_published = false;
 };
 
 /// Parameters at 25 °C.

@@ -1,13 +1,9 @@
 #include <algorithm>
 #include <bandwright/population.hpp>
 
+#include "units/constants.hpp"
+
 namespace bandwright {
-
-namespace {
-
-constexpr double kColdBegins = 293.15;  // K: 20 °C, to which the capacitance of an electrolytic is printed
-
-}  // namespace
 
 PartValues values_at_work(const Population& p, double ambient) {
   PartValues values = p.printed;

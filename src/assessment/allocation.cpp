@@ -39,7 +39,9 @@ bool is_allowed(const Family& f, const Spec& spec, const OfferedValue& part) {
 }
 
 /// The classes a part can be bought in, loosest first, one for each tolerance; the part's own family is preferred.
-std::vector<Class> classes_of(const Spec& spec, const Catalogue& catalogue, const OfferedValue& part) {
+/// Another family must have a rating above the part's stress.
+std::vector<Class> classes_of(const Spec& spec, const Catalogue& catalogue, const OfferedValue& part, double volts,
+                              double watts) {
   std::vector<Class> list = {{part.family, part.tolerance}};
   const auto add = [&list](const Family& f) {
     for (const Tolerance& t : f.tolerances) {
@@ -49,7 +51,8 @@ std::vector<Class> classes_of(const Spec& spec, const Catalogue& catalogue, cons
   };
   add(*part.family);
   for (const Family& f : catalogue.families) {
-    if (f.kind == part.family->kind && is_made(f, part.value) && is_allowed(f, spec, part)) add(f);
+    const bool fits = f.kind == part.family->kind && is_made(f, part.value) && is_allowed(f, spec, part);
+    if (fits && rating_row(f, volts, watts)) add(f);
   }
   std::stable_sort(list.begin(), list.end(),
                    [](const Class& a, const Class& b) { return half_width(a.tolerance) > half_width(b.tolerance); });
@@ -63,8 +66,13 @@ public:
   Allocator(const Spec& spec, const Catalogue& catalogue, const BipolarParameters& device, const OfferedParts& parts,
             const Analysis& nominal)
       : spec_(spec), device_(device), parts_(parts), nominal_(nominal) {
+    PartValues values{};
+    for (std::size_t i = 0; i < kRoleCount; ++i) values[i] = parts[i].working_value;
+    const Stress stress = bandwright::stress({values, &device, surroundings(spec)}, nominal.point,
+                                             spec.highest_supply(), spec.source.dc, spec.load.dc);
     for (std::size_t i = 0; i < kRoleCount; ++i) {
-      if (parts[i].value > 0 && parts[i].family != nullptr) classes_[i] = classes_of(spec, catalogue, parts[i]);
+      if (parts[i].value > 0 && parts[i].family != nullptr)
+        classes_[i] = classes_of(spec, catalogue, parts[i], stress.volts[i], stress.watts[i]);
     }
   }
 
@@ -82,7 +90,7 @@ public:
       a.steps.push_back(step);
     }
     a.reached = a.yield.share() >= spec_.assess.yield;
-    if (a.reached) take_back(a);
+    take_back(a, std::min(spec_.assess.yield, a.yield.share()));
     for (std::size_t i = 0; i < kRoleCount; ++i) {
       if (classes_[i].empty()) continue;
       a.parts.push_back({static_cast<Role>(i), shown(classes_[i].front()), shown(now(i)), if_looser(i)});
@@ -129,15 +137,15 @@ private:
     return kRoleCount;
   }
 
-  /// Each part one class looser, as long as the yield holds.
-  void take_back(Allocation& a) {
+  /// Each part one class looser, as long as the share that passes holds.
+  void take_back(Allocation& a, double needed) {
     for (bool changed = true; changed;) {
       changed = false;
       for (std::size_t i = 0; i < kRoleCount; ++i) {
         if (classes_[i].empty() || level_[i] == 0) continue;
         --level_[i];
         const Yield y = trial();
-        if (y.share() >= spec_.assess.yield) {
+        if (y.share() >= needed) {
           a.yield = y;
           changed = true;
         } else {

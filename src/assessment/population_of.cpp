@@ -9,6 +9,12 @@ namespace bandwright {
 
 namespace {
 
+/// What the limits of a device figure rest on.
+const char* basis_of(const DeviceLimits& l) {
+  if (l.below_published) return l.above_published ? "published" : "minimum published, maximum assumed";
+  return l.above_published ? "maximum published, minimum assumed" : "assumed";
+}
+
 CauseSpread part_spread(const OfferedValue& part) {
   if (!(part.value > 0)) return {0, 0, 0, "absent"};
   return {0, part.tolerance.below, part.tolerance.above, "tolerance of the part"};
@@ -19,14 +25,12 @@ CauseSpread part_spread(const OfferedValue& part) {
 CauseSpread gain_spread(const BipolarParameters& device, const OperatingPoint& point) {
   const std::array<double, 2> limits = gain_limits(device, point.collector_current);
   const double low = ln(limits[0] / point.gain_at_zero_vce), high = ln(limits[1] / point.gain_at_zero_vce);
-  const bool published = device.limits[index(Cause::current_gain)].published;
-  return {(low + high) / 2, (high - low) / 2, (high - low) / 2,
-          published ? "published" : "minimum published, maximum assumed"};
+  return {(low + high) / 2, (high - low) / 2, (high - low) / 2, basis_of(device.limits[index(Cause::current_gain)])};
 }
 
 CauseSpread device_spread(const BipolarParameters& device, Cause cause) {
   const DeviceLimits& l = device.limits[index(cause)];
-  return {0, l.below, l.above, l.published ? "published" : "assumed"};
+  return {0, l.below, l.above, basis_of(l)};
 }
 
 CauseSpread usual_spread(const CauseInfo& row, const BipolarParameters& device, const OfferedParts& parts,
@@ -87,10 +91,15 @@ Population population_of(const Spec& spec, const BipolarParameters& device, cons
   return p;
 }
 
+std::string condition_text(const Population& p, const OperatingCondition& c) {
+  return format_quantity(c.ambient, Dimension::temperature) + ", " +
+         format_quantity(p.device.pnp ? -c.supply : c.supply, Dimension::voltage);
+}
+
 std::string condition_name(const Population& p, std::size_t condition) {
   if (condition == 0) return "nominal";
   const OperatingCondition& c = p.conditions[condition];
-  return format_quantity(c.ambient, Dimension::temperature) + ", " + format_quantity(c.supply, Dimension::voltage);
+  return condition_text(p, c);
 }
 
 }  // namespace bandwright

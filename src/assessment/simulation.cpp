@@ -122,7 +122,8 @@ Moments moments(const std::vector<double>& values) {
   for (double x : values) sum += x;
   const double mean = sum / n;
   for (double x : values) squares += (x - mean) * (x - mean);
-  return {mean, values.size() > 1 ? square_root(squares / (n - 1)) : 0};
+  const double sigma = values.size() > 1 ? square_root(squares / (n - 1)) : 0;
+  return {mean, sigma > kNoSpread * std::fabs(mean) ? sigma : 0};
 }
 
 void drop_missing(std::vector<double>& values) {

@@ -20,6 +20,13 @@ double gain_half_width(const BipolarParameters& device, double collector_current
   return ln(limits[1] / limits[0]) / 2;
 }
 
+double assessed_half_width(const Spec& spec, Cause cause, double usual) {
+  const auto& chosen = spec.assess.causes[index(cause)];
+  if (!chosen) return usual;
+  const bool by_logarithm = info(cause).scale == CauseScale::logarithm;
+  return by_logarithm ? ln((1 + chosen->above) / (1 - chosen->below)) / 2 : half_width(*chosen);
+}
+
 double tolerance_sensitivity(const Spec& spec, const Sensitivity& sensitivity, const CauseWidths& widths) {
   double largest = 0;
   for (const FigureInfo& f : figures()) {

@@ -8,12 +8,6 @@
 
 namespace bandwright {
 
-namespace {
-
-constexpr double kColdBegins = 293.15;  // K, as for values at work
-
-}  // namespace
-
 double factor_at(const CauseInfo& cause, double deviation) {
   if (cause.scale == CauseScale::logarithm) return e_to(deviation);
   return cause.scale == CauseScale::share ? 1 + deviation : deviation;

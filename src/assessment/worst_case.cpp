@@ -16,10 +16,6 @@ namespace {
 constexpr double kNamedShare = 0.05;  // causes that make less of the excursion are not named
 constexpr std::size_t kMostNamed = 5;
 
-std::string condition_text(const OperatingCondition& c) {
-  return format_quantity(c.ambient, Dimension::temperature) + ", " + format_quantity(c.supply, Dimension::voltage);
-}
-
 /// "hFE min, R3 max, 60 °C, 11.4 V"
 std::string corner_name(const UnitBox& box, Figure figure, const Place& at) {
   const std::vector<FigureValues> slopes = at.slopes.empty() ? box.slopes(at.point, at.analysis, false) : at.slopes;
@@ -40,7 +36,7 @@ std::string corner_name(const UnitBox& box, Figure figure, const Place& at) {
     name += causes()[parts[k].second].symbol;
     name += z == 0 ? " min, " : z == 1 ? " max, " : " inside its limits, ";
   }
-  return name + condition_text(at.point.at);
+  return name + condition_text(box.population(), at.point.at);
 }
 
 /// The corners of supply and ambient; where neither varies, the nominal condition.
@@ -54,7 +50,7 @@ WorstCase worst_case(const UnitBox& box, Figure figure, const std::vector<Place>
   const Extremes e = extremes(box, figure, nominal, polish);
   if (e.failed) {
     const Stage stage = box.unit(e.failed->point).stage;
-    w.reason = "a unit at a corner (" + condition_text(e.failed->point.at) +
+    w.reason = "a unit at a corner (" + condition_text(box.population(), e.failed->point.at) +
                ") has no value: " + why_absent(e.failed->analysis, stage, box.population().definition, figure);
     return w;
   }
@@ -77,7 +73,8 @@ std::array<WorstCase, kFigureCount> worst_cases(const Population& population, co
     const Analysis& a = nominal.back().analysis;
     if (a.point.state == BiasState::active) continue;
     const std::string why = why_absent(a, nominal_stage(population, c), population.definition, Figure::gain);
-    for (Figure f : figures) list[index(f)].reason = "the nominal unit at " + condition_text(c) + ": " + why;
+    for (Figure f : figures)
+      list[index(f)].reason = "the nominal unit at " + condition_text(population, c) + ": " + why;
     return list;
   }
   for (Figure f : figures) list[index(f)] = worst_case(box, f, nominal, options.polish);

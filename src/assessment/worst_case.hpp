@@ -9,8 +9,7 @@ struct WorstCaseOptions {
   bool polish = true;  ///< false: corners only
 };
 
-/// Corner worst case of the figures asked for, the others left NaN. `sensitivities` at each condition of the
-/// population, `at_condition` the nominal unit's figures there.
+/// Corner worst case of the figures asked for, with the corners named and the root sum of squares; the others left NaN.
 std::array<WorstCase, kFigureCount> worst_cases(const Population& population, const std::vector<Figure>& figures,
                                                 const WorstCaseOptions& options = {});
 

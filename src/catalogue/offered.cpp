@@ -8,12 +8,11 @@
 #include <cmath>
 
 #include "catalogue/choice.hpp"
+#include "units/constants.hpp"
 
 namespace bandwright {
 
 namespace {
-
-constexpr double kColdBegins = 293.15;  // K: 20 °C, to which the capacitance of an electrolytic is printed
 
 // The values of a series between two limits, rising. A decade is a power of ten that double holds exactly (or the
 // nearest quotient by one), so that each value equals its printed decimal.

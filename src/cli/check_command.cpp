@@ -196,7 +196,7 @@ Command check_command() {
       {"bandwright check result.json --pick 2",
        "bandwright check --supply 12V --device BC547B --upper-divider 47k --lower-divider 10k --collector 4k7 "
        "--emitter 470 --emitter-bypassed 560 --input-coupling 1u --output-coupling 1u --bypass 100u",
-       "bandwright check result.json --collector 5k1 --ambient 50°C"},
+       "bandwright check result.json --collector 5k1 --load-resistance 22k"},
       options,
       run_check};
 }

@@ -16,21 +16,21 @@ constexpr double kBaseResistance = 1.5;
 constexpr double kCutoffCurrent = 10;   // the nominal value is a tenth of a lone published max
 constexpr double kBaseEmitter = 0.040;  // V
 
-DeviceLimits about(double factor) { return {ln(factor), ln(factor), false}; }
+DeviceLimits about(double factor) { return {ln(factor), ln(factor), false, false}; }
 
 // The usual factor, but the published limit on the side where there is one beyond the nominal value.
 DeviceLimits by_ratio(double factor, double nominal, double min, double max) {
   DeviceLimits l = about(factor);
-  if (min > 0 && min < nominal) l = {ln(nominal / min), l.above, true};
-  if (max > nominal) l = {l.below, ln(max / nominal), true};
+  if (min > 0 && min < nominal) l.below = ln(nominal / min), l.below_published = true;
+  if (max > nominal) l.above = ln(max / nominal), l.above_published = true;
   return l;
 }
 
 DeviceLimits base_emitter(const ChosenPoint& point) {
-  DeviceLimits l{kBaseEmitter, kBaseEmitter, false};
+  DeviceLimits l{kBaseEmitter, kBaseEmitter, false, false};
   const double nominal = point.nominal.value;
-  if (point.min < nominal) l = {nominal - point.min, l.above, true};
-  if (point.max > nominal) l = {l.below, point.max - nominal, true};
+  if (point.min < nominal) l.below = nominal - point.min, l.below_published = true;
+  if (point.max > nominal) l.above = point.max - nominal, l.above_published = true;
   return l;
 }
 
@@ -38,7 +38,7 @@ DeviceLimits cutoff(const ChosenPoint& point) {
   if (!(point.nominal.value > 0)) return {};
   if (!(point.max > point.nominal.value)) return about(kCutoffCurrent);
   const double span = ln(point.max / point.nominal.value);
-  return {span, span, true};
+  return {span, span, false, true};
 }
 
 }  // namespace
@@ -55,7 +55,8 @@ std::array<DeviceLimits, kCauseCount> device_limits(const ChosenFigures& c) {
   of(Cause::base_resistance) = about(kBaseResistance);
   of(Cause::cutoff_current) = cutoff(c.cutoff);
   of(Cause::base_emitter_voltage) = base_emitter(c.base_emitter);
-  of(Cause::current_gain).published = !c.gain.max.empty();
+  of(Cause::current_gain).below_published = true;
+  of(Cause::current_gain).above_published = !c.gain.max.empty();
   return limits;
 }
 

@@ -7,14 +7,14 @@
 #include "kernel/solve_units.hpp"
 #include "kernel/solvers.hpp"
 #include "numeric/elementary.hpp"
+#include "units/constants.hpp"
 
 namespace bandwright {
 
 namespace {
 
-constexpr std::size_t kWidest = 8;       // rows are padded to whole packs of any width
-constexpr double kPeakProbe = 1e-4;      // relative, of u: for the slope at the peak
-constexpr double kDriftBegins = 298.15;  // K: parts have their printed value at 25 °C
+constexpr std::size_t kWidest = 8;   // rows are padded to whole packs of any width
+constexpr double kPeakProbe = 1e-4;  // relative, of u: for the slope at the peak
 
 struct LaneRow {
   LaneKind kind;
@@ -50,7 +50,7 @@ const std::array<CauseScale, kCauseCount>& scales() {
 WarmStart warm_start(const Population& p, const OperatingCondition& condition) {
   WarmStart w;
   w.stage = nominal_stage(p, condition);
-  w.warmth = condition.ambient - kDriftBegins;
+  w.warmth = condition.ambient - kReferenceTemperature;
   w.junction = condition.ambient + p.junction_rise;
   const Analysis a = analyse_unit({w.stage, {}, w.junction}, p.definition);
   w.log_current = ln(a.point.collector_current);

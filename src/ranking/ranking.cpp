@@ -96,8 +96,8 @@ namespace {
 int compare_rest(const RankKey& a, const RankKey& b, RankBy by) {
   const auto order = [by](const RankKey& k) {
     const int sensitivity = sensitivity_class(k.tolerance_sensitivity);
-    return std::tuple(by == RankBy::yield ? -k.capability : 0.0, error_class(k.error), sensitivity, k.distinct_values,
-                      k.series_sum);
+    return std::tuple(by == RankBy::yield || by == RankBy::worst_case ? -k.capability : 0.0, error_class(k.error),
+                      sensitivity, k.distinct_values, k.series_sum);
   };
   const auto ka = order(a), kb = order(b);
   if (ka != kb) return ka < kb ? -1 : 1;
@@ -162,13 +162,14 @@ std::vector<std::size_t> alternatives(const std::vector<Standing>& all, RankBy b
 std::vector<std::vector<std::string>> best_at(const std::vector<Standing>& list) {
   struct Title {
     const char* name;
-    double (*measure)(const Standing&);  // smaller is better
+    double (*measure)(const Standing&);                      // smaller is better
+    double least = std::numeric_limits<double>::infinity();  // must be under this
   };
   static constexpr Title kTitles[] = {
       {"most exact", [](const Standing& s) { return s.key.error; }},
-      {"most producible", [](const Standing& s) { return -s.key.capability; }},
-      {"highest yield", [](const Standing& s) { return -s.yield; }},
-      {"best worst case", [](const Standing& s) { return -s.worst_case_margin; }},
+      {"most producible", [](const Standing& s) { return -s.key.capability; }, 0},
+      {"highest yield", [](const Standing& s) { return -s.yield; }, 0},
+      {"best worst case", [](const Standing& s) { return -s.worst_case_margin; }, 1e299},
       {"least sensitive", [](const Standing& s) { return s.key.tolerance_sensitivity; }},
       {"lowest current", [](const Standing& s) { return s.key.supply_current; }},
       {"fewest parts", [](const Standing& s) { return double(s.key.parts); }},
@@ -179,9 +180,11 @@ std::vector<std::vector<std::string>> best_at(const std::vector<Standing>& list)
   std::vector<std::vector<std::string>> titles(list.size());
   if (list.size() < 2) return titles;  // nothing to be best among
   for (const Title& t : kTitles) {
-    const auto best = std::min_element(
+    const auto [best, worst] = std::minmax_element(
         list.begin(), list.end(), [&](const Standing& a, const Standing& b) { return t.measure(a) < t.measure(b); });
-    if (best != list.end()) titles[best - list.begin()].push_back(t.name);
+    // where all are alike, or the best has none, there is nothing to be named for
+    const bool earned = t.measure(*best) < t.measure(*worst) && t.measure(*best) < t.least;
+    if (earned) titles[static_cast<std::size_t>(best - list.begin())].push_back(t.name);
   }
   return titles;
 }

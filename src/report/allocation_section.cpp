@@ -100,8 +100,9 @@ void add_steps(TextSheet& sheet, const Allocation& allocation) {
 
 void add_allocation(TextSheet& sheet, const Allocation& allocation, const Spec& spec) {
   sheet.heading("Tolerance allocation");
-  if (!allocation.reached) sheet.line("Not even the tightest classes that are sold give the yield.");
-  sheet.line(answer_text(allocation));
+  sheet.line(allocation.reached
+                 ? answer_text(allocation)
+                 : "Tighter tolerances alone do not give the yield; tightened is what raises it at all.");
   sheet.line(outcome_text(allocation, spec));
   add_parts_grid(sheet, allocation);
   add_steps(sheet, allocation);

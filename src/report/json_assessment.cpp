@@ -34,7 +34,8 @@ Json by_figure_and_cause(const std::string& field, const Sensitivity& cells, con
                          const Candidate& candidate, const Spec& spec, Notes& notes) {
   Json out = Json::object();
   for (const FigureInfo& figure : figures()) {
-    if (!std::isfinite(candidate.analysis.figures[index(figure.figure)])) continue;
+    const bool held = figure.figure == Figure::junction_temperature;  // its rise is, for every unit
+    if (held || !std::isfinite(candidate.analysis.figures[index(figure.figure)])) continue;
     const std::string key = shown_key(figure);
     Json& row = out[key] = Json::object();
     for (const CauseInfo& cause : causes()) {

@@ -89,13 +89,13 @@ std::string counted(std::size_t units) {
 
 std::string capability_text(double capability, const Assessment& assessment) {
   if (std::isnan(capability)) return "-";
-  return fmt::format("{}{:.2f}", assessment.from_moments ? "~" : "", capability);
+  return fmt::format("{}{:.2f}", assessment.from_moments && capability != 0 ? "~" : "", capability);
 }
 
 std::string capability_definition(bool marked) {
   return fmt::format(
       "capability: from the median of the units to the nearer limit, over what lies between the median and their "
-      "0.135 % or 99.865 % quantile on that side; at most 2{}.",
+      "0.135 % or 99.865 % quantile on that side; at most 2, 0 where more than 0.135 % of the units are not active{}.",
       marked ? "; ~: fewer than 20,000 units, mean and 3 sigma in place of quantiles" : "");
 }
 

@@ -115,7 +115,7 @@ void add_spread(TextSheet& sheet, const Assessment& assessment, const Candidate&
   sheet.line(fmt::format(
       "worst case: every cause at its limits, at the worst supply and ambient; RSS: root sum of squares of the causes' "
       "effects at their limits; sigma: over the units, at nominal{}.",
-      any_required ? "; failed: units that miss the requirement at some condition" : ""));
+      any_required ? "; failed: active units that miss the requirement at some condition" : ""));
 }
 
 }  // namespace bandwright

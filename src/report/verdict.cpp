@@ -22,10 +22,12 @@ std::string verdict_text(const DesignResult& result) {
     return "The stage does not work as an amplifier: see its notes.";
   if (!any_requirement(result.spec)) return "Recomputed; no requirement was stated.";
   if (meeting == 0)
-    return all == 1 ? "The candidate does not meet every requirement."
-                    : fmt::format("None of {} candidates meets every requirement; the nearest are listed.", all);
-  if (all == 1) return "The candidate meets every requirement.";
-  return fmt::format("{} of {} candidates {} every requirement.", meeting, all, meeting == 1 ? "meets" : "meet");
+    return all == 1
+               ? "The candidate does not meet every requirement nominally."
+               : fmt::format("None of {} candidates meets every requirement nominally; the nearest are listed.", all);
+  if (all == 1) return "The candidate meets every requirement nominally.";
+  return fmt::format("{} of {} candidates {} every requirement nominally.", meeting, all,
+                     meeting == 1 ? "meets" : "meet");
 }
 
 // "; C3 makes 61 % of its spread".

@@ -37,12 +37,14 @@ double search_error(const Spec& spec, const Analysis& a, const PartValues& worki
   return v > 0 ? kWorstError * (1 + v) : error(spec, a.figures);
 }
 
-CauseWidths cause_widths(const DesignSpace& space, const GridPoint& point, double collector_current) {
+CauseWidths cause_widths(const Spec& spec, const DesignSpace& space, const GridPoint& point, double collector_current) {
   CauseWidths widths{};
   for (std::size_t i = 0; i < kRoleCount; ++i) {
-    if (space.has(i)) widths[i] = half_width(space.at(i, point).tolerance);
+    if (space.has(i))
+      widths[i] = assessed_half_width(spec, static_cast<Cause>(i), half_width(space.at(i, point).tolerance));
   }
-  widths[index(Cause::current_gain)] = gain_half_width(space.device->parameters, collector_current);
+  widths[index(Cause::current_gain)] =
+      assessed_half_width(spec, Cause::current_gain, gain_half_width(space.device->parameters, collector_current));
   return widths;
 }
 
@@ -202,7 +204,7 @@ void Evaluator::look_ahead(const GridPoint& point, Known& k) {
   k.sensitivity = kWorstError;
   k.capability = -kWorstError;
   if (o.analysis.point.state != BiasState::active) return;
-  const CauseWidths widths = cause_widths(space_, point, o.analysis.point.collector_current);
+  const CauseWidths widths = cause_widths(spec_, space_, point, o.analysis.point.collector_current);
   const double s = tolerance_sensitivity(spec_, o.sensitivity, widths);
   if (!std::isnan(s)) k.sensitivity = s;
   if (by_capability) k.capability = estimated_capability(o.distances);

@@ -23,7 +23,7 @@ double search_error(const Spec& spec, const Analysis& analysis, const PartValues
                     const BipolarParameters& device);
 
 /// The tolerances' half-widths at a grid point, and hFE's at a collector current.
-CauseWidths cause_widths(const DesignSpace& space, const GridPoint& point, double collector_current);
+CauseWidths cause_widths(const Spec& spec, const DesignSpace& space, const GridPoint& point, double collector_current);
 
 class Evaluator {
 public:

@@ -159,8 +159,8 @@ Relaxed relax(const Spec& spec, const DesignSpace& space, const PartValues& star
   r.error = search_error(spec, a, r.values, *stage.device);
   if (r.error < kWorstError) {
     const Sensitivity slopes = sensitivity(stage, a, gain_definition(spec));
-    r.tolerance_sensitivity =
-        tolerance_sensitivity(spec, slopes, cause_widths(space, snap(space, r.values), a.point.collector_current));
+    r.tolerance_sensitivity = tolerance_sensitivity(
+        spec, slopes, cause_widths(spec, space, snap(space, r.values), a.point.collector_current));
   }
   return r;
 }

@@ -1,6 +1,7 @@
 #include "spec/statements.hpp"
 
 #include <algorithm>
+#include <set>
 
 #include "spec/reading.hpp"
 #include "units/printable.hpp"
@@ -170,6 +171,7 @@ void Statements::unknown_option(const std::string& option, const std::string& te
 // "collector=4k7,shunt=absent"
 void Statements::take_keyed(const Field& field, const Override& given) {
   const std::string where = "--" + given.first;
+  std::set<std::string> seen;
   for (const std::string& item : comma_separated(given.second)) {
     const std::size_t equals = item.find('=');
     if (equals == std::string::npos) {
@@ -177,6 +179,10 @@ void Statements::take_keyed(const Field& field, const Override& given) {
       continue;
     }
     const std::string key = item.substr(0, equals);
+    if (!seen.insert(key).second) {
+      object_at(field.path, {where, key + " twice", "each key once", ""});
+      continue;
+    }
     const Field* row = find_field(joined(field.path, key));
     if (row)
       state(row->path, {where + " " + key, command_line_value(*row, item.substr(equals + 1))});

@@ -188,7 +188,7 @@ TEST_CASE("the allocation answers in one sentence first") {
   CHECK_THAT(text, ContainsSubstring("Every part may be at its loosest: 5 %, -20/+50 %."));
   CHECK_THAT(text, !ContainsSubstring("tightened"));
   allocation.reached = false;
-  CHECK_THAT(write_table(result, kWide), ContainsSubstring("Not even the tightest classes that are sold"));
+  CHECK_THAT(write_table(result, kWide), ContainsSubstring("Tighter tolerances alone do not give the yield"));
 }
 
 TEST_CASE("without a requirement units are only active or not") {

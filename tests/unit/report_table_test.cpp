@@ -33,7 +33,7 @@ std::size_t widest(const std::string& text) {
 
 TEST_CASE("the verdict stands first") {
   DesignResult result = test::sample_result();
-  CHECK_THAT(write_table(result), StartsWith("1 of 2 candidates meets every requirement.\n"));
+  CHECK_THAT(write_table(result), StartsWith("1 of 2 candidates meets every requirement nominally.\n"));
   result.candidates[0].shortfalls = result.candidates[1].shortfalls;
   result.met = false;
   CHECK_THAT(write_table(result), StartsWith("None of 2 candidates meets every requirement"));
@@ -61,7 +61,7 @@ TEST_CASE("an empty list gives its reason and still the cautions") {
 TEST_CASE("one candidate and no requirement is a recomputation") {
   DesignResult result = test::sample_result();
   result.candidates.pop_back();
-  CHECK_THAT(write_table(result), StartsWith("The candidate meets every requirement."));
+  CHECK_THAT(write_table(result), StartsWith("The candidate meets every requirement nominally."));
   result.spec.requirements = {};
   CHECK_THAT(write_table(result), StartsWith("Recomputed; no requirement was stated."));
 }
