@@ -185,12 +185,6 @@ Json candidate_document(const Candidate& candidate, const Spec& spec) {
   return out;
 }
 
-Json caution_list() {
-  Json out = Json::array();
-  for (const Caution& one : cautions()) out.push_back({{"code", one.code}, {"text", one.text}});
-  return out;
-}
-
 }  // namespace
 
 std::string write_json(const DesignResult& result) {

@@ -147,12 +147,6 @@ Json differing_parts(const Compared& list) {
   return out;
 }
 
-Json caution_list() {
-  Json out = Json::array();
-  for (const Caution& one : cautions()) out.push_back({{"code", one.code}, {"text", one.text}});
-  return out;
-}
-
 }  // namespace
 
 std::string write_comparison_json(const Comparison& comparison) {

@@ -1,6 +1,7 @@
-// Nulls of the result document and their reasons.
+// What the JSON documents share: nulls with their reasons, and the cautions.
 #pragma once
 
+#include <bandwright/purchase.hpp>
 #include <cmath>
 #include <map>
 #include <nlohmann/json.hpp>
@@ -32,5 +33,12 @@ public:
 private:
   std::map<std::string, std::string> notes_;
 };
+
+/// The usual cautions, as every document carries them.
+inline Json caution_list() {
+  Json out = Json::array();
+  for (const Caution& one : cautions()) out.push_back({{"code", one.code}, {"text", one.text}});
+  return out;
+}
 
 }  // namespace bandwright

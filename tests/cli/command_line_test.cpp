@@ -73,6 +73,7 @@ std::vector<Wrong> wrong_command_lines() {
       {design({"--source-resistance", "-600"}), "source"},
       {design({"--load-capacitance", "10"}), "10"},
       {design({"--ambient", "25"}), "ambient"},
+      {design({"--assess-causes", "current_gain=off,current_gain=10%"}), "each key once"},
       {design({"--assess-units", "10"}), "a whole number from 100 to 1000000"},
       {design({"--assess-causes", "curent_gain=off"}), "did you mean \"current_gain\"?"},
       {{"check"}, "nothing to check"},

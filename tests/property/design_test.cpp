@@ -151,6 +151,8 @@ TEST_CASE("another seed may move the list, never the definition of its best", "[
   const DesignResult result = design(spec, built_in_catalogue());
   REQUIRE_FALSE(result.candidates.empty());
   CHECK(result.candidates.front().standing.key.capability > 1.9);
+  const auto& list = result.candidates;
+  CHECK(std::any_of(list.begin(), list.end(), [](const Candidate& c) { return c.error <= kExact; }));
 }
 
 TEST_CASE("a wider series never worsens the best error class", "[property]") {
