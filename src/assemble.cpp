@@ -5,6 +5,7 @@
 #include <cmath>
 #include <set>
 
+#include "bought.hpp"
 #include "from_memory.hpp"
 #include "numeric/elementary.hpp"
 #include "units/constants.hpp"
@@ -43,7 +44,15 @@ std::vector<std::string> general_assumptions(const Spec& spec) {
       "searched: stages with VCE of at least " + format_quantity(kLeastCollectorEmitter, Dimension::voltage) +
           " and IC RC of at least " + format_quantity(kLeastCollectorDrop, Dimension::voltage) +
           ", within the transistor's limits, each part with a rating that holds",
-      "ratings: DC voltage at the highest supply with nominal parts; no worst case yet"};
+      "ratings: the worst corner of tolerances, hFE, VBE, VA, ICBO, supply and ambient; derated from memory of "
+      "ECSS-Q-ST-30-11C, which was not read"};
+  if (!spec.parts.stock.empty())
+    list.push_back(
+        spec.parts.stock_only
+            ? "parts come from the stock " + spec.parts.stock + " alone"
+            : "parts at hand in the stock " + spec.parts.stock +
+                  " come before bought ones among stages of the same error class, or that meet the spec with "
+                  "a capability of at least 1");
   if (spec.ambient.nominal < kColdBegins)
     list.push_back("electrolytics lose 0.5 % for each kelvin below 20 °C (from memory)");
   return list;
@@ -53,7 +62,8 @@ CauseWidths widths_of(const Spec& spec, const OfferedParts& parts, const Bipolar
                       double collector_current) {
   CauseWidths w{};
   for (std::size_t i = 0; i < kRoleCount; ++i) {
-    if (parts[i].value > 0) w[i] = assessed_half_width(spec, static_cast<Cause>(i), half_width(parts[i].tolerance));
+    if (parts[i].value > 0)
+      w[i] = assessed_half_width(spec, static_cast<Cause>(i), half_width(tolerance_at_work(parts[i])));
   }
   w[index(Cause::current_gain)] =
       assessed_half_width(spec, Cause::current_gain, gain_half_width(device, collector_current));
@@ -107,6 +117,15 @@ std::vector<const Transistor*> fitting_transistors(const Spec& spec, const Catal
   for (const Transistor& t : catalogue.transistors) {
     if (spec.devices.empty() && t.pnp == spec.pnp()) list.push_back(&t);
   }
+  // a stock of resistors and capacitors alone leaves the transistor open
+  const auto at_hand = [&](const Transistor* t) {
+    return std::any_of(catalogue.stock.parts.begin(), catalogue.stock.parts.end(), [&](const StockPart& s) {
+      const bool enough = !s.quantity || *s.quantity >= spec.parts.boards;
+      return s.kind == PartKind::transistor && s.type == t->type && enough;
+    });
+  };
+  if (spec.parts.stock_only && spec.devices.empty() && std::any_of(list.begin(), list.end(), at_hand))
+    std::erase_if(list, [&](const Transistor* t) { return !at_hand(t); });
   return list;
 }
 
@@ -116,11 +135,12 @@ Spec with_device(Spec spec, const std::string& device) {
 }
 
 Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogue& catalogue,
-                   const OfferedParts& parts) {
+                   const OfferedParts& chosen) {
   Candidate c;
   c.device = device.parameters.type;
   c.parameters = device.parameters;
-  c.offered = parts;
+  buy(spec, catalogue, chosen, c);
+  const OfferedParts& parts = c.offered;
   PartValues printed{};
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     c.working_values[i] = parts[i].working_value;
@@ -131,6 +151,7 @@ Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogu
   const Stage stage{c.working_values, &c.parameters, surroundings(spec)};
   const GainDefinition definition = gain_definition(spec);
   c.analysis = analyse(stage, definition);
+  c.analysis.figures[index(Figure::cost)] = cost_of(c);
   c.poles_estimate = pole_model(stage, c.analysis, definition);
   c.poles = poles_and_zeros(c.analysis.transfer);
   c.sensitivity = sensitivity(stage, c.analysis, definition, ResponseModel::exact, all_causes());
@@ -146,9 +167,6 @@ Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogu
     c.tolerance_sensitivity = tolerance_sensitivity(spec, c.sensitivity, widths_of(spec, parts, c.parameters, i_c));
     c.gain_limits = gain_limits(c.parameters, i_c);
   }
-  std::string reason;
-  c.parts = parts_list(spec, parts, stage, c.analysis, &reason);
-  if (!reason.empty()) c.notes["parts"] = reason;
   add_notes(spec, stage, definition, c);
   if (const Transistor* t = catalogue.find_transistor(c.device)) c.packages = t->packages;
   return c;

@@ -7,6 +7,7 @@
 #include <bandwright/search.hpp>
 #include <cmath>
 
+#include "alternates_trial.hpp"
 #include "assemble.hpp"
 #include "finalists.hpp"
 
@@ -42,12 +43,13 @@ DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOp
   assess_all(spec, options, finalists);
   rank(result, std::move(finalists));
   if (options.allocate) allocate(spec, catalogue, result);
+  if (options.alternates) add_alternates(spec, catalogue, options, result);
   finish(result, tried, outcome.nearest_miss);
   return result;
 }
 
-DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values,
-                   const DesignOptions& options, const PartFamilies& families) {
+DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartChoices& choices,
+                   const DesignOptions& options) {
   if (auto faults = check_against_catalogue(with_device(spec, device), catalogue); !faults.empty()) {
     for (Fault& f : faults) {
       if (f.where == "devices[0]") f.where = "device";
@@ -56,16 +58,15 @@ DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::stri
   }
   const std::vector<DerivedDevice> devices = {derive_parameters(*catalogue.find_transistor(device))};
   OfferedParts parts;
-  for (const RoleInfo& r : roles()) {
-    const double value = values[index(r.role)];
-    if (value > 0) parts[index(r.role)] = resolve_value(catalogue, spec, r.role, value, families[index(r.role)]);
-  }
+  for (const RoleInfo& r : roles())
+    parts[index(r.role)] = resolve_value(catalogue, spec, r.role, choices[index(r.role)]);
   DesignResult result = empty_result(spec, options.rank_by);
   result.searched = false;
   std::vector<Candidate> one = {assemble(spec, devices.front(), catalogue, parts)};
   assess_all(spec, options, one);
   rank(result, std::move(one));
   if (options.allocate) allocate(spec, catalogue, result);
+  if (options.alternates) add_alternates(spec, catalogue, options, result);
   finish(result, devices, "");
   return result;
 }

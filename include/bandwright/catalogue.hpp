@@ -10,6 +10,7 @@
 #include <bandwright/fault.hpp>
 #include <bandwright/quantity.hpp>
 #include <bandwright/spec.hpp>
+#include <bandwright/stock.hpp>
 #include <filesystem>
 #include <map>
 #include <optional>
@@ -73,6 +74,8 @@ struct Transistor {
   std::vector<SheetFigure> input_capacitance;     ///< Cib, F
   std::vector<SheetFigure> cutoff_current;        ///< ICBO, A
   std::vector<Package> packages;
+  double unit_cost = kNotComputed;  ///< of one
+  bool invented_cost = false;       ///< the cost is made up for demonstration
 };
 
 /// A family of resistors or capacitors that is really sold.
@@ -88,8 +91,14 @@ struct Family {
   std::vector<double> voltage_ratings;  ///< V DC, rising
   std::vector<double> power_ratings;    ///< W, rising
   bool polarised = false;
-  bool bias_dependent = false;                    ///< class 2 ceramic: refused until its bias loss is counted
-  double cold_loss = 0;                           ///< 1/K: share lost for each kelvin below 20 °C
+  bool electrolytic = false;  ///< derated as one, polarised or not
+  std::string unpolarised;    ///< key of the family that takes its place where nothing settles the polarity
+  Tolerance further_limits;   ///< class 2 ceramic: what temperature and ageing add to the tolerance
+  double bias_loss = 0;       ///< class 2 ceramic: share of the capacitance lost at the rated DC voltage, linear below
+  double cold_loss = 0;       ///< 1/K: share lost for each kelvin below 20 °C
+  double unit_cost = kNotComputed;                ///< of one
+  double unit_cost_per_value = 0;                 ///< added for each ohm or farad
+  bool invented_cost = false;                     ///< the costs are made up for demonstration
   std::map<std::string, std::string> provenance;  ///< field to "source key: mark, note", for display
 };
 
@@ -103,6 +112,7 @@ struct Catalogue {
   std::vector<Family> families;
   std::vector<Transistor> transistors;
   std::map<std::string, SourceEntry> sources;
+  Stock stock;  ///< the user's own parts
 
   /// By name, capitals or not; nullptr where there is none.
   const Transistor* find_transistor(std::string_view type) const;
@@ -134,35 +144,79 @@ bool in_series(const Series& series, double value);
 /// The coarsest series that holds the value, or nullptr.
 const Series* coarsest_series(double value);
 
-/// A value that can be bought for a role, resolved before any analysis.
+/// How the parts of a role are joined.
+enum class Connection { single, series, parallel };
+const char* word(Connection connection);  ///< "series"
+
+/// One part of a pair.
+struct PairedPart {
+  double value = 0;  ///< printed
+  Tolerance tolerance;
+  const Series* series = nullptr;
+  const StockPart* stock = nullptr;
+  double unit_cost = kNotComputed;
+};
+
+/// A value that can be bought for a role, resolved before any analysis. A pair acts as one value; its tolerance is that
+/// of both parts at their ends.
 struct OfferedValue {
   double value = 0;          ///< printed on the part, ohm or farad
   double working_value = 0;  ///< at the nominal ambient: cold electrolytics lose capacitance
   const Family* family = nullptr;
   Tolerance tolerance;
-  const Series* series = nullptr;  ///< coarsest series that holds it; nullptr: none
+  const Series* series = nullptr;    ///< coarsest series that holds it; nullptr: none
+  const StockPart* stock = nullptr;  ///< the user's own part; nullptr: to be bought
+  double unit_cost = kNotComputed;
+  bool invented_cost = false;
+  const Family* unpolarised = nullptr;  ///< takes the place of a polarised one where nothing settles the polarity
+  double bias_factor = 1;               ///< what DC voltage leaves of a class 2 ceramic; part of the working value
+  Connection connection = Connection::single;
+  std::array<PairedPart, 2> pair{};  ///< where the connection is not single
 };
+
+/// What a DC voltage leaves of a class 2 ceramic's capacitance: 1 - loss V/Vrated, in the rating that its worst corner
+/// takes; 1 for all other parts.
+double bias_factor(const OfferedValue& part, const Derating& derating, double volts, double worst_volts);
+
+/// The tolerance of a part at work: what temperature and ageing do to a class 2 ceramic joins the printed one.
+Tolerance tolerance_at_work(const OfferedValue& part);
 
 /// The values offered for a role under a spec's rules, rising by working value; one value where it is pinned.
 /// A capacitor comes from the family that is first choice at its value; where the spec names families, from each of
 /// them that is made at it. The result points into `catalogue`.
 std::vector<OfferedValue> offered_values(const Catalogue& catalogue, const Spec& spec, Role role);
 
+/// A part that is given rather than searched for.
+struct PartChoice {
+  double value = 0;           ///< printed, ohm or farad; of a pair: of both together; 0: absent
+  std::string family{};       ///< name or key; empty: as the spec's rules have it
+  std::string part_number{};  ///< of the stock's part; empty: the first that fits
+  bool from_stock = true;     ///< false: bought, whatever the stock holds
+  Connection connection = Connection::single;
+  std::array<double, 2> pair{};  ///< printed values, where the connection is not single
+};
+using PartChoices = std::array<PartChoice, kRoleCount>;
+PartChoices choices_of(const PartValues& values);
+
 /// One value resolved as offered_values would: family, tolerance, working value. A value in no family's range
-/// takes the nearest family of its kind. `family`: the name or key of the one wanted, where the rules allow it.
-OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, double value,
-                           std::string_view family = {});
+/// takes the nearest family of its kind.
+OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, const PartChoice& choice);
 
 /// The offered value in each role; an absent role has value 0.
 using OfferedParts = std::array<OfferedValue, kRoleCount>;
 
-/// Rated voltage above the highest nominal voltage, next standard row; nullopt where the family has none.
-std::optional<double> rated_voltage(const Family& family, double highest_volts);
+/// What a part may stand. NaN: not stated.
+struct Rating {
+  double voltage = kNotComputed;  ///< V
+  double power = kNotComputed;    ///< W
+};
 
-/// Index of the smallest rating of a family that stands above the highest nominal voltage and is loaded to no more than
-/// half of its power (common practice, no source); power and voltage ratings of a resistor are pairs. nullopt where the
-/// family has none.
-std::optional<std::size_t> rating_row(const Family& family, double highest_volts, double highest_watts);
+/// The share of its rated voltage that a part may be loaded to.
+double voltage_share(const Derating& derating, const Family& family);
+
+/// The smallest rating, next standard row up, that is loaded to no more than its derated share; a stock part has but
+/// its own one (where it states none, the smallest of its family). nullopt where none holds, or the load is NaN.
+std::optional<Rating> rating_that_holds(const OfferedValue& part, const Derating& derating, double volts, double watts);
 
 /// What a spec asks for and a catalogue cannot give: unknown devices and families, a polarity that the supply does not
 /// take, a family that is refused, a pinned value that is not sold, rules under which no value is sold.

@@ -6,6 +6,7 @@
 #pragma once
 
 #include <array>
+#include <bandwright/alternates.hpp>
 #include <bandwright/analysis.hpp>
 #include <bandwright/assessment.hpp>
 #include <bandwright/catalogue.hpp>
@@ -33,6 +34,9 @@ struct Candidate {
   BipolarParameters parameters;
   std::array<double, 2> gain_limits{};  ///< beta0 min and max at the operating current, 25 °C
   std::vector<Part> parts;
+  Part transistor;
+  WorstStress stress;
+  std::vector<StressRow> stress_table;
   PartValues working_values{};  ///< values at work, ohm and farad
   OfferedParts offered;         ///< as bought: value, family, tolerance; points into the catalogue
   Standing standing;            ///< what the order looks at
@@ -48,6 +52,7 @@ struct Candidate {
   std::vector<Package> packages;             ///< lead orders
   std::optional<Assessment> assessment;      ///< what becomes of many units; only where the stage is active
   std::optional<Allocation> allocation;      ///< on request, of the first candidate
+  std::optional<Alternates> alternates;      ///< on request
   bool non_dominated =
       false;  ///< no other is as good in error, capability, current and number of parts, and better in one
 };
@@ -72,17 +77,15 @@ struct DesignOptions {
   int threads = 0;                               ///< 0: as many as there are
   bool with_response = false;                    ///< response, envelope, histograms, node voltages of each candidate
   bool allocate = false;                         ///< tolerance allocation of the first candidate
+  bool alternates = false;                       ///< what may stand in for each part of each candidate
   std::function<bool(double share)> keep_going;  ///< called now and then with the share done; false stops early
 };
 
 /// Searches. Throws InputError where the spec names a device that the catalogue does not hold.
 DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOptions& options = {});
 
-/// Names or keys of the families that given parts are bought from; empty: as the spec's rules have it.
-using PartFamilies = std::array<std::string, kRoleCount>;
-
-/// Recomputes given parts (0: absent) with one device. Requirements, where the spec has any, are compared.
-DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartValues& values,
-                   const DesignOptions& options = {}, const PartFamilies& families = {});
+/// Recomputes given parts with one device. Requirements, where the spec has any, are compared.
+DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartChoices& parts,
+                   const DesignOptions& options = {});
 
 }  // namespace bandwright

@@ -76,6 +76,9 @@ std::optional<Figure> find_figure(std::string_view key);
 
 constexpr std::size_t index(Figure figure) { return static_cast<std::size_t>(figure); }
 
+/// True where a figure differs from unit to unit.
+constexpr bool varies(Figure figure) { return figure != Figure::cost; }
+
 inline constexpr double kNotComputed = std::numeric_limits<double>::quiet_NaN();
 
 /// A value for each figure, SI; NaN where it was not computed or does not exist.

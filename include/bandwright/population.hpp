@@ -24,6 +24,14 @@ struct CauseSpread {
   bool varies() const { return below > 0 || above > 0; }
 };
 
+/// Two parts in one role, each with its own deviation.
+struct PairSpread {
+  bool is_pair = false;
+  bool adds_up = true;  ///< the values add up; false: their reciprocals do
+  double weight = 1;    ///< of the first part: its share of the value, or of the reciprocal
+  std::array<Tolerance, 2> tolerance{};
+};
+
 /// A supply and an ambient temperature at which every unit must meet the requirements.
 struct OperatingCondition {
   double supply = 0;   ///< V, magnitude
@@ -32,11 +40,13 @@ struct OperatingCondition {
 
 struct Population {
   BipolarParameters device;
-  PartValues printed{};                                      ///< values printed on the parts; 0: absent
+  PartValues printed{};                                                   ///< values printed on the parts; 0: absent
+  std::array<double, kRoleCount> bias_factor{1, 1, 1, 1, 1, 1, 1, 1, 1};  ///< what DC voltage leaves of the capacitance
   std::array<double, kRoleCount> cold_loss{};                ///< 1/K: capacitance lost for each kelvin below 20 °C
   std::array<double, kRoleCount> temperature_coefficient{};  ///< 1/K, two-sided
   Surroundings around;                                       ///< at the nominal condition
-  std::array<CauseSpread, kCauseCount> spread{};
+  std::array<CauseSpread, kCauseCount> spread{};             ///< of a pair: both parts at their ends
+  std::array<PairSpread, kRoleCount> pairs{};
   bool uniform = false;
   double junction_rise = 0;  ///< K, of the nominal unit at the nominal condition, held
   GainDefinition definition;

@@ -9,6 +9,7 @@
 //   std::string s = format_quantity(4700.0, Dimension::resistance);  // "4.7 kΩ"
 #pragma once
 
+#include <optional>
 #include <stdexcept>
 #include <string>
 #include <string_view>
@@ -68,6 +69,16 @@ std::string format_quantity(double value, Dimension dimension, int digits = 4);
 /// The IEC 60062 code of a resistance or capacitance, exact to four significant digits:
 /// 4700 gives "4K7", 1e-7 F gives "100n". Source: IEC 60062:2016, letter in place of the decimal point.
 std::string value_code(double value, Dimension dimension);
+
+/// The tolerance letter of IEC 60062, "F" for 1 %; empty where its table has none. Below 10 pF the letters of capacitors
+/// mean something else: see below. Source and marks: src/units/tolerance_letters.cpp.
+std::string tolerance_letter(const Tolerance& tolerance);
+
+/// What a tolerance letter of IEC 60062 stands for; capital letters only.
+std::optional<Tolerance> tolerance_of_letter(char letter);
+
+/// The same on a capacitor below 10 pF: farad, two-sided; none where no letter is used there.
+std::optional<double> small_capacitance_tolerance_of_letter(char letter);
 
 /// A nominal example for error messages: "a resistance such as 4.7k, 4K7 or 4700".
 std::string describe_dimension(Dimension dimension);

@@ -3,7 +3,9 @@
 // By error: error class (nearest multiple of 0.05, halves up); then round(ln(tolerance_sensitivity)/ln 1.05); then
 // fewer distinct (kind, value) pairs; then the smaller sum of series numbers (E6 counts 6); then the values of R1..R5,
 // C1..C4 in that order, smaller first, absent before present. By anything else: candidates that meet the spec nominally
-// first, then the measure of the order, then as by error.
+// first, then the measure of the order, then as by error. Where the user has a stock, fewer parts to buy come right
+// after the class that leads: among stages of the same error class, or that meet the spec; by capability, yield and
+// worst case among those with a capability of at least 1.
 #pragma once
 
 #include <bandwright/role.hpp>
@@ -13,7 +15,7 @@
 
 namespace bandwright {
 
-enum class RankBy { capability, error, sensitivity, yield, worst_case, current, parts };
+enum class RankBy { capability, error, sensitivity, yield, worst_case, current, parts, cost };
 
 /// One row an order: its word on the command line and what it puts first.
 struct RankOrder {
@@ -31,6 +33,8 @@ struct RankKey {
   double capability = 0;      ///< estimated while searching, simulated in the end
   double supply_current = 0;  ///< A
   int parts = 0;
+  int to_buy = -1;  ///< parts that do not come from the stock; -1: there is no stock
+  double cost = 0;  ///< of all parts of one board; NaN where one is not known
   int distinct_values = 0;
   int series_sum = 0;
   PartValues values{};
@@ -49,6 +53,9 @@ struct Standing {
   std::string device;
   std::string variant;
 };
+
+/// A capability from which parts at hand come first.
+inline constexpr double kProducible = 1;
 
 int error_class(double error);
 int sensitivity_class(double tolerance_sensitivity);

@@ -1,7 +1,9 @@
 // Report: writers of a result. They format and never compute.
 #pragma once
 
+#include <bandwright/alternates.hpp>
 #include <bandwright/design.hpp>
+#include <optional>
 #include <string>
 #include <string_view>
 
@@ -27,12 +29,16 @@ std::string write_transistor(const Catalogue& catalogue, const Transistor& trans
 std::string write_family(const Catalogue& catalogue, const Family& family);
 std::string write_series(const Series& series);
 
+/// The stock of a catalogue: for people what it holds and what is taken where rows say nothing; "bandwright/stock"
+/// version 1.
+std::string write_stock(const Catalogue& catalogue, const TableStyle& style = {});
+std::string write_stock_json(const Catalogue& catalogue);
+
 /// One candidate as a result document states it.
 struct StoredCandidate {
   int rank = 1;
   std::string device;
-  PartValues values{};       ///< ohm and farad as printed; 0: absent
-  PartFamilies families;     ///< names of families; empty where the document states none
+  PartChoices parts;         ///< as the document states them
   FigureValues figures{};    ///< as the document states them, NaN where null; temperatures in kelvin
   bool has_figures = false;  ///< the document carries figures
 };
@@ -88,5 +94,27 @@ std::string write_comparison_json(const Comparison& comparison);
 
 /// One row a candidate, RFC 4180.
 std::string write_comparison_csv(const Comparison& comparison);
+
+/// Pairs of roles of one board that might share a value.
+struct BoardConsolidations {
+  std::string prefix;  ///< of the board
+  std::vector<Consolidation> list;
+};
+
+/// A bill of materials, and what might make it shorter.
+struct PurchaseList {
+  Bill bill;
+  std::optional<std::vector<BoardConsolidations>> consolidations;  ///< absent: nobody asked
+};
+
+/// For people: rows, alternates, notes, proposals, cautions.
+std::string write_bill_table(const PurchaseList& list, const TableStyle& style = {});
+
+/// "bandwright/bill" version 1.
+std::string write_bill_json(const PurchaseList& list);
+
+/// One row a distinct part, RFC 4180. No cell is taken for a formula: a text that would begin like one gets a word, or
+/// an apostrophe in front where it comes from the user.
+std::string write_bill_csv(const Bill& bill);
 
 }  // namespace bandwright

@@ -12,7 +12,7 @@
 
 namespace bandwright {
 
-enum class PartKind { resistor, capacitor };
+enum class PartKind { resistor, capacitor, transistor };  ///< no role takes a transistor
 
 enum class Role {
   upper_divider,     ///< R1: supply to base

@@ -66,11 +66,29 @@ struct PartRules {
   std::optional<double> min, max;      ///< limits on the value
 };
 
+/// Shares of a rating that a part may be loaded to at its worst corner. The defaults are from memory of
+/// ECSS-Q-ST-30-11C, which was not read.
+struct Derating {
+  double capacitor_voltage = 0.6;     ///< of the rated DC voltage
+  double electrolytic_voltage = 0.8;  ///< the same of an aluminium electrolytic
+  double resistor_power = 0.5;
+  double resistor_voltage = 0.8;
+  double transistor_voltage = 0.75;  ///< VCE of VCEO
+  double transistor_current = 0.75;
+  double transistor_power = 0.65;
+  double junction_margin = 40;  ///< K under the highest junction temperature
+};
+
 struct Parts {
   PartRules resistors;
   PartRules capacitors;
   std::array<std::optional<ValueRange>, kRoleCount> ranges;  ///< overrides min and max for a role
   std::array<std::optional<double>, kRoleCount> pinned;      ///< fixed value; 0: the part is absent
+  std::string stock;                                         ///< name of the stock file; empty: none
+  bool stock_only = false;                                   ///< nothing but the stock is used
+  bool pairs = false;                                        ///< two parts may stand in one role where one misses
+  int boards = 1;                                            ///< boards that the stock must last for
+  Derating derating;
 };
 
 /// How built units are assessed.
@@ -124,6 +142,7 @@ struct OptionKey {
   std::string option;  ///< "gain-min", "supply", "source-resistance"
   std::string path;    ///< "requirements.gain.min"
   std::string help;    ///< one line: what it is, unit, default
+  bool flag = false;   ///< it takes no value; its text is empty, or "false"
 };
 
 /// Every command-line form of the spec, from the same table the JSON reader uses, in the table's order.

@@ -7,7 +7,10 @@ namespace bandwright {
 
 PartValues values_at_work(const Population& p, double ambient) {
   PartValues values = p.printed;
-  for (std::size_t i = 0; i < kRoleCount; ++i) values[i] *= 1 - p.cold_loss[i] * std::max(kColdBegins - ambient, 0.0);
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    values[i] *= p.bias_factor[i];
+    values[i] *= 1 - p.cold_loss[i] * std::max(kColdBegins - ambient, 0.0);
+  }
   return values;
 }
 

@@ -1,17 +1,12 @@
 #include <bandwright/analysis.hpp>
-#include <cmath>
 
 #include "analysis/operating_point.hpp"
+#include "analysis/stress_equations.hpp"
 
 namespace bandwright {
 
-Stress stress(const Stage& stage, const OperatingPoint& nominal, double supply_magnitude, double source_dc,
-              double load_dc) {
-  Circuit<double> c = circuit_of<double>(stage);
-  c.supply = supply_magnitude;
-  const NominalBias bias = bias_at(stage, c, nominal.junction_temperature, ln(nominal.collector_current));
-  const OperatingPoint& p = bias.point;
-  const double sign = stage.device->pnp ? -1 : 1;
+Stress stress_of(bool pnp, const Circuit<double>& c, const OperatingPoint& p, double source_dc, double load_dc) {
+  const double sign = pnp ? -1 : 1;
   const double i_e = p.collector_current + p.base_current;
   const double v_c = p.emitter_voltage + p.collector_emitter_voltage;
   const double v_junction = i_e * c[Role::emitter_bypassed];
@@ -28,9 +23,17 @@ Stress stress(const Stage& stage, const OperatingPoint& nominal, double supply_m
   volts(Role::bypass) = sign * v_junction;
   volts(Role::shunt) = sign * v_c;
   for (std::size_t i = 0; i < kResistorRoles; ++i) {
-    if (stage.parts[i] > 0) s.watts[i] = s.volts[i] * s.volts[i] / stage.parts[i];
+    if (c.part[i] > 0) s.watts[i] = s.volts[i] * s.volts[i] / c.part[i];
   }
   return s;
+}
+
+Stress stress(const Stage& stage, const OperatingPoint& nominal, double supply_magnitude, double source_dc,
+              double load_dc) {
+  Circuit<double> c = circuit_of<double>(stage);
+  c.supply = supply_magnitude;
+  const NominalBias bias = bias_at(stage, c, nominal.junction_temperature, ln(nominal.collector_current));
+  return stress_of(stage.device->pnp, c, bias.point, source_dc, load_dc);
 }
 
 }  // namespace bandwright

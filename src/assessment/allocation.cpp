@@ -2,6 +2,7 @@
 // tightened until the yield is reached; then every tightening that turns out not to be needed is taken back.
 #include <algorithm>
 #include <bandwright/assessment.hpp>
+#include <bandwright/stress.hpp>
 #include <cmath>
 
 #include "analysis/unit.hpp"
@@ -35,7 +36,7 @@ bool is_allowed(const Family& f, const Spec& spec, const OfferedValue& part) {
   const PartRules& rules = f.kind == PartKind::resistor ? spec.parts.resistors : spec.parts.capacitors;
   if (&f == part.family) return true;
   const bool named = std::find(rules.families.begin(), rules.families.end(), f.key) != rules.families.end();
-  return !f.bias_dependent && (rules.families.empty() || named);
+  return rules.families.empty() ? f.bias_loss == 0 : named;
 }
 
 /// The classes a part can be bought in, loosest first, one for each tolerance; the part's own family is preferred.
@@ -52,7 +53,9 @@ std::vector<Class> classes_of(const Spec& spec, const Catalogue& catalogue, cons
   add(*part.family);
   for (const Family& f : catalogue.families) {
     const bool fits = f.kind == part.family->kind && is_made(f, part.value) && is_allowed(f, spec, part);
-    if (fits && rating_row(f, volts, watts)) add(f);
+    OfferedValue other;
+    other.family = &f;
+    if (fits && rating_that_holds(other, spec.parts.derating, volts, watts)) add(f);
   }
   std::stable_sort(list.begin(), list.end(),
                    [](const Class& a, const Class& b) { return half_width(a.tolerance) > half_width(b.tolerance); });
@@ -66,13 +69,10 @@ public:
   Allocator(const Spec& spec, const Catalogue& catalogue, const BipolarParameters& device, const OfferedParts& parts,
             const Analysis& nominal)
       : spec_(spec), device_(device), parts_(parts), nominal_(nominal) {
-    PartValues values{};
-    for (std::size_t i = 0; i < kRoleCount; ++i) values[i] = parts[i].working_value;
-    const Stress stress = bandwright::stress({values, &device, surroundings(spec)}, nominal.point,
-                                             spec.highest_supply(), spec.source.dc, spec.load.dc);
+    const WorstStress stress = worst_stress(spec, population_of(spec, device, parts, nominal));
     for (std::size_t i = 0; i < kRoleCount; ++i) {
       if (parts[i].value > 0 && parts[i].family != nullptr)
-        classes_[i] = classes_of(spec, catalogue, parts[i], stress.volts[i], stress.watts[i]);
+        classes_[i] = classes_of(spec, catalogue, parts[i], stress.volts[i].largest(), stress.watts[i].largest());
     }
   }
 

@@ -21,7 +21,7 @@ std::vector<Figure> bounded(const Spec& spec) {
   std::vector<Figure> list(kAlways.begin(), kAlways.end());
   for (const FigureInfo& f : figures()) {
     const bool listed = std::find(list.begin(), list.end(), f.figure) != list.end();
-    if (spec.requirement(f.figure) && !listed) list.push_back(f.figure);
+    if (spec.requirement(f.figure) && varies(f.figure) && !listed) list.push_back(f.figure);
   }
   return list;
 }
@@ -50,6 +50,22 @@ bool holds_at_worst(const Spec& spec, const Assessment& a) {
   return true;
 }
 
+/// What is the same in every unit: it meets its requirement in all of them, or in none.
+void add_fixed_figures(const Spec& spec, const Analysis& nominal, Assessment& a) {
+  for (const FigureInfo& f : figures()) {
+    const auto& r = spec.requirement(f.figure);
+    if (!r || varies(f.figure)) continue;
+    const double x = nominal.figures[index(f.figure)];
+    a.worst_case[index(f.figure)] = {x, x, "every unit", "every unit", x, x, ""};
+    FigureSpread& s = a.spread[index(f.figure)];
+    s.mean = x;
+    s.sigma = 0;
+    s.capability = meets(*r, x) ? kHighestCapability : -kHighestCapability;
+    s.failed = meets(*r, x) ? 0 : a.yield.units;
+    a.capability = std::min(a.capability, s.capability);
+  }
+}
+
 std::string verdict(const Spec& spec, const Assessment& a) {
   const bool any = std::any_of(spec.requirements.begin(), spec.requirements.end(), [](const auto& r) { return r; });
   if (!any) return "";
@@ -73,6 +89,7 @@ Assessment assess(const Spec& spec, Population population, const Analysis& nomin
   a.share = variance_shares(s, relative_widths(p, p.conditions.front().ambient));
   a.worst_case = worst_cases(p, bounded(spec));
   simulate(spec, a, options.with_response);
+  add_fixed_figures(spec, nominal, a);
   a.nominal_met = meets_all(spec, nominal.figures);
   a.worst_case_margin = margin_at_worst(spec, a);
   a.worst_case_met = holds_at_worst(spec, a);

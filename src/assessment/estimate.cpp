@@ -61,7 +61,7 @@ std::vector<LimitDistance> limit_distances(const Spec& spec, const Analysis& nom
   std::vector<LimitDistance> list;
   for (const FigureInfo& f : figures()) {
     const auto& r = spec.requirement(f.figure);
-    if (!r) continue;
+    if (!r || !varies(f.figure)) continue;
     const std::size_t i = index(f.figure);
     const double x = nominal.figures[i];
     const bool linear = f.dimension == Dimension::voltage;

@@ -17,7 +17,8 @@ const char* basis_of(const DeviceLimits& l) {
 
 CauseSpread part_spread(const OfferedValue& part) {
   if (!(part.value > 0)) return {0, 0, 0, "absent"};
-  return {0, part.tolerance.below, part.tolerance.above, "tolerance of the part"};
+  const Tolerance t = tolerance_at_work(part);
+  return {0, t.below, t.above, "tolerance of the part"};
 }
 
 /// hFE: the type's lowest and highest beta0 at the design's current are the ends, its nominal one need not be their
@@ -48,6 +49,14 @@ CauseSpread chosen_spread(const CauseInfo& row, const Tolerance& limits) {
   return {(low + high) / 2, (high - low) / 2, (high - low) / 2, "spec"};
 }
 
+/// Two parts of one role deviate each by itself.
+PairSpread pair_spread(const OfferedValue& part) {
+  if (part.connection == Connection::single) return {};
+  const bool sum = part.value > part.pair[0].value;  // a sum lies above its terms, a reciprocal sum below
+  const double first = part.pair[0].value;
+  return {true, sum, sum ? first / part.value : part.value / first, {part.pair[0].tolerance, part.pair[1].tolerance}};
+}
+
 std::vector<OperatingCondition> conditions_of(const Spec& spec) {
   const auto magnitude = [](double v) { return std::fabs(v); };
   std::vector<OperatingCondition> list = {{magnitude(spec.supply.nominal), spec.ambient.nominal}};
@@ -76,6 +85,7 @@ Population population_of(const Spec& spec, const BipolarParameters& device, cons
   p.conditions = conditions_of(spec);
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     p.printed[i] = parts[i].value;
+    p.bias_factor[i] = parts[i].bias_factor;
     if (parts[i].family == nullptr) continue;
     p.cold_loss[i] = parts[i].family->cold_loss;
     p.temperature_coefficient[i] =
@@ -87,6 +97,7 @@ Population population_of(const Spec& spec, const BipolarParameters& device, cons
     spread = usual_spread(row, device, parts, nominal.point);
     const bool is_there = row.kind != CauseKind::part || parts[index(row.cause)].value > 0;
     if (chosen && is_there) spread = chosen_spread(row, *chosen);
+    if (row.kind == CauseKind::part && !chosen) p.pairs[index(row.cause)] = pair_spread(parts[index(row.cause)]);
   }
   return p;
 }

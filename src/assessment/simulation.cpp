@@ -22,7 +22,7 @@ std::vector<Figure> watched(const Spec& spec) {
   std::vector<Figure> list;
   for (const FigureInfo& f : figures()) {
     const bool band = f.figure == Figure::gain || f.figure == Figure::lower_cutoff || f.figure == Figure::upper_cutoff;
-    if (band || spec.requirement(f.figure)) list.push_back(f.figure);
+    if (band || (spec.requirement(f.figure) && varies(f.figure))) list.push_back(f.figure);
   }
   return list;
 }
@@ -57,7 +57,7 @@ private:
   bool passes(const UnitBlock& block, std::size_t unit) {
     bool active = true;
     for (std::size_t c = 0; c < inactive_at_.size(); ++c) {
-      if (block.outcome(c, unit) == Outcome::active) continue;
+      if (block.outcome(c, unit) == UnitOutcome::active) continue;
       active = false;
       ++inactive_at_[c];
     }

@@ -31,7 +31,7 @@ double tolerance_sensitivity(const Spec& spec, const Sensitivity& sensitivity, c
   double largest = 0;
   for (const FigureInfo& f : figures()) {
     const auto& r = spec.requirement(f.figure);
-    if (!r) continue;
+    if (!r || !varies(f.figure)) continue;
     double sum = 0;
     for (std::size_t i = 0; i < kCauseCount; ++i) {
       const double part = sensitivity[index(f.figure)][i] * widths[i];

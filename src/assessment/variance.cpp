@@ -9,12 +9,23 @@
 
 namespace bandwright {
 
+namespace {
+
+/// Root sum of squares of what the two parts do to their common value.
+double pair_width(const PairSpread& pair) {
+  const double a = pair.weight * half_width(pair.tolerance[0]), b = (1 - pair.weight) * half_width(pair.tolerance[1]);
+  return square_root(a * a + b * b);
+}
+
+}  // namespace
+
 CauseWidths relative_widths(const Population& p, double ambient) {
   CauseWidths widths{};
   for (const CauseInfo& row : causes()) {
     const CauseSpread& s = p.spread[index(row.cause)];
     double& w = widths[index(row.cause)];
     w = row.scale == CauseScale::share ? half_width({s.below, s.above}) : (s.below + s.above) / 2;
+    if (row.kind == CauseKind::part && p.pairs[index(row.cause)].is_pair) w = pair_width(p.pairs[index(row.cause)]);
     if (row.scale == CauseScale::volts) w /= p.device.base_emitter_voltage;
     if (row.kind != CauseKind::part) continue;
     const double drift = p.temperature_coefficient[index(row.cause)] * std::fabs(ambient - kReferenceTemperature);

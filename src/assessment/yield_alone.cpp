@@ -22,7 +22,7 @@ struct Demands {
   explicit Demands(const Spec& spec) {
     for (const FigureInfo& f : bandwright::figures()) {
       const auto& r = spec.requirement(f.figure);
-      if (!r) continue;
+      if (!r || !varies(f.figure)) continue;
       if (f.figure != Figure::lower_cutoff && f.figure != Figure::upper_cutoff) {
         figures.push_back(f.figure);
         continue;
@@ -36,7 +36,7 @@ struct Demands {
   }
 
   bool met(const Spec& spec, const UnitBlock& block, std::size_t condition, std::size_t unit) const {
-    if (block.outcome(condition, unit) != Outcome::active) return false;
+    if (block.outcome(condition, unit) != UnitOutcome::active) return false;
     for (std::size_t k = 0; k < figures.size(); ++k) {
       if (!meets(*spec.requirement(figures[k]), block.value(condition, k, unit))) return false;
     }

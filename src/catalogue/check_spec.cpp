@@ -40,13 +40,10 @@ void check_devices(const Spec& spec, const Catalogue& catalogue, std::vector<Fau
 std::vector<std::string> offered_keys(const Catalogue& catalogue, PartKind kind) {
   std::vector<std::string> keys;
   for (const Family& f : catalogue.families) {
-    if (f.kind == kind && !f.bias_dependent) keys.push_back(f.key);
+    if (f.kind == kind) keys.push_back(f.key);
   }
   return keys;
 }
-
-// "X7R" of "X7R ceramic capacitor": the name that a person asked for.
-std::string first_word(const std::string& name) { return name.substr(0, name.find(' ')); }
 
 void check_family(const std::string& key, const std::string& where, const Catalogue& catalogue, PartKind kind,
                   std::vector<Fault>& faults) {
@@ -58,11 +55,6 @@ void check_family(const std::string& key, const std::string& where, const Catalo
     faults.push_back({where, key, "one of: " + listed, nearest_name(key, keys)});
   } else if (family->kind != kind) {
     faults.push_back({where, key, std::string("a family of ") + plural(kind) + ", one of: " + listed, ""});
-  } else if (family->bias_dependent) {
-    faults.push_back({where, key,
-                      "one of: " + listed + "; " + first_word(family->name) +
-                          " is not offered until its loss under DC bias is counted",
-                      ""});
   }
 }
 
@@ -103,13 +95,53 @@ void check_pinned(const Spec& spec, const Catalogue& catalogue, const RoleInfo& 
   }
 }
 
+bool takes_class_2_only(const PartRules& rules, const Catalogue& catalogue) {
+  return !rules.families.empty() &&
+         std::all_of(rules.families.begin(), rules.families.end(), [&](const std::string& key) {
+           const Family* f = catalogue.find_family(key);
+           return f != nullptr && f->bias_loss > 0;
+         });
+}
+
+bool is_at_hand(const Catalogue& catalogue, const RoleInfo& role, double value) {
+  return std::any_of(catalogue.stock.parts.begin(), catalogue.stock.parts.end(),
+                     [&](const StockPart& s) { return s.kind == role.kind && same_value(s.value, value); });
+}
+
+/// A stock that is named and not there, or too small for what is asked.
+void check_stock(const Spec& spec, const Catalogue& catalogue, std::vector<Fault>& faults) {
+  if (!spec.parts.stock.empty() && catalogue.stock.name.empty()) {
+    faults.push_back(
+        {"parts.stock", spec.parts.stock, "the stock's parts in the catalogue, as read_stock gives them", ""});
+  }
+  if (!spec.parts.stock_only) return;
+  for (const RoleInfo& role : roles()) {
+    const auto& pin = spec.parts.pinned[index(role.role)];
+    if (pin && *pin > 0 && !is_at_hand(catalogue, role, *pin)) {
+      faults.push_back({std::string("parts.pinned.") + role.key, shown(*pin, role.kind),
+                        "a value of the stock, or parts.stock_only left out", ""});
+    }
+  }
+}
+
 void check_roles(const Spec& spec, const Catalogue& catalogue, std::vector<Fault>& faults) {
   for (const RoleInfo& role : roles()) {
     if (spec.parts.pinned[index(role.role)]) {
-      check_pinned(spec, catalogue, role, faults);
+      if (!is_at_hand(catalogue, role, *spec.parts.pinned[index(role.role)]))
+        check_pinned(spec, catalogue, role, faults);
+    } else if (!role.may_be_absent && spec.parts.stock_only && offered_values(catalogue, spec, role.role).empty()) {
+      faults.push_back({"parts.stock", std::string("no part for ") + role.key,
+                        std::string("a row of ") + plural(role.kind) +
+                            " within the spec's ranges and families, with at "
+                            "least as many pieces as boards; or parts.stock_only left out",
+                        ""});
     } else if (!role.may_be_absent && offered_values(catalogue, spec, role.role).empty()) {
       faults.push_back({std::string("parts.") + plural(role.kind), std::string("no value for ") + role.key,
-                        "families, series, tolerance and range under which at least one value is sold", ""});
+                        std::string("families, series, tolerance and range under which at least one value is sold") +
+                            (takes_class_2_only(rules_for(spec, role.role), catalogue)
+                                 ? "; a class 2 ceramic is refused where the cutoff it sets must be better than ±40 %"
+                                 : ""),
+                        ""});
     }
   }
 }
@@ -123,6 +155,7 @@ std::vector<Fault> check_against_catalogue(const Spec& spec, const Catalogue& ca
   check_rules(spec.parts.resistors, PartKind::resistor, catalogue, faults);
   check_rules(spec.parts.capacitors, PartKind::capacitor, catalogue, faults);
   // An unknown family or series would show again at every role.
+  check_stock(spec, catalogue, faults);
   if (faults.size() == before) check_roles(spec, catalogue, faults);
   return faults;
 }

@@ -13,10 +13,9 @@ bool fits(const Tolerance& offered, const Tolerance& wanted) {
 
 double width(const Tolerance& t) { return t.below + t.above; }
 
-// Bias-dependent families are never offered: their loss under DC bias is not counted.
 std::vector<const Family*> allowed(const Catalogue& catalogue, const PartRules& rules, PartKind kind) {
   std::vector<const Family*> list;
-  const auto usable = [&](const Family& f) { return f.kind == kind && !f.bias_dependent && !f.tolerances.empty(); };
+  const auto usable = [&](const Family& f) { return f.kind == kind && !f.tolerances.empty(); };
   for (const std::string& key : rules.families) {
     const Family* family = catalogue.find_family(key);
     if (family != nullptr && usable(*family)) list.push_back(family);

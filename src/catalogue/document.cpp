@@ -3,6 +3,7 @@
 #include <bandwright/fault.hpp>
 #include <set>
 
+#include "catalogue/costs_json.hpp"
 #include "catalogue/family_json.hpp"
 #include "catalogue/json_place.hpp"
 #include "catalogue/names.hpp"
@@ -20,6 +21,7 @@ struct Gathering {
   std::set<std::string> seen;  // types and keys met in this reading
   std::vector<Fault> faults;
   std::vector<ReadingLog::Reference> references;
+  std::vector<CostTable> costs;  // set when every family and transistor is known
 };
 
 // True at the first meeting in this reading; a second one is a fault, since neither can be right.
@@ -64,7 +66,7 @@ void add_sources(Gathering& all, const JsonPlace& place) {
 }
 
 void add_lists(Gathering& all, const JsonPlace& root) {
-  root.only_keys({"transistors", "families", "sources", "note"});
+  root.only_keys({"transistors", "families", "sources", "costs", "note"});
   if (root.has("sources")) add_sources(all, root.member("sources"));
   if (root.has("transistors")) {
     for (const JsonPlace& place : root.member("transistors").elements()) add_transistor(all, place);
@@ -72,6 +74,7 @@ void add_lists(Gathering& all, const JsonPlace& root) {
   if (root.has("families")) {
     for (const JsonPlace& place : root.member("families").elements()) add_family(all, place);
   }
+  if (root.has("costs")) all.costs.push_back(read_costs(root.member("costs")));
 }
 
 void add_document(Gathering& all, const CatalogueDocument& document) {
@@ -112,9 +115,10 @@ void check_references(Gathering& all) {
 }  // namespace
 
 Catalogue with_documents(Catalogue base, const std::vector<CatalogueDocument>& documents) {
-  Gathering all{base, {}, {}, {}};
+  Gathering all{base, {}, {}, {}, {}};
   for (const CatalogueDocument& document : documents) add_document(all, document);
   check_references(all);
+  for (const CostTable& table : all.costs) set_costs(table, base, all.faults);
   if (!all.faults.empty()) throw InputError(std::move(all.faults));
   return base;
 }

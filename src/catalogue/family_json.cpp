@@ -105,6 +105,13 @@ void read_ratings(const JsonPlace& place, Family& family) {
   }
 }
 
+void read_further_limits(const JsonPlace& place, Family& family) {
+  if (place.has("below")) family.further_limits.below = place.member("below").quantity(Dimension::fraction).value_or(0);
+  if (place.has("above")) family.further_limits.above = place.member("above").quantity(Dimension::fraction).value_or(0);
+  if (!(family.further_limits.below >= 0 && family.further_limits.below < 1 && family.further_limits.above >= 0))
+    place.fault("shares: below from 0 up to, but not, 1, above at least 0");
+}
+
 void read_kind(const JsonPlace& place, Family& family) {
   const std::string kind = text_or(place, "kind", "resistor or capacitor");
   if (!place.has("kind")) place.missing("kind", "resistor or capacitor");
@@ -114,10 +121,22 @@ void read_kind(const JsonPlace& place, Family& family) {
   family.kind = kind == "capacitor" ? PartKind::capacitor : PartKind::resistor;
 }
 
-const std::vector<std::string> kFamilyKeys = {
-    "key",     "name",      "kind",         "polarised",  "bias_dependent",
-    "series",  "made",      "first_choice", "tolerances", "temperature_coefficient",
-    "ratings", "cold_loss", "note"};
+const std::vector<std::string> kFamilyKeys = {"key",
+                                              "name",
+                                              "kind",
+                                              "polarised",
+                                              "electrolytic",
+                                              "unpolarised",
+                                              "series",
+                                              "made",
+                                              "first_choice",
+                                              "tolerances",
+                                              "temperature_coefficient",
+                                              "ratings",
+                                              "cold_loss",
+                                              "bias_loss",
+                                              "further_limits",
+                                              "note"};
 
 void require(const JsonPlace& place) {
   for (const char* key : {"series", "made", "tolerances", "ratings"}) {
@@ -141,7 +160,8 @@ std::optional<Family> read_family(const JsonPlace& place) {
     return marked(place, key, std::move(keys), family);
   };
   if (place.has("polarised")) family.polarised = place.member("polarised").truth().value_or(false);
-  if (place.has("bias_dependent")) family.bias_dependent = place.member("bias_dependent").truth().value_or(false);
+  if (place.has("electrolytic")) family.electrolytic = place.member("electrolytic").truth().value_or(false);
+  family.unpolarised = text_or(place, "unpolarised", "the key of a family");
   if (const auto m = member("series", {"names"})) read_series(*m, family);
   if (const auto m = member("made", {"min", "max"})) family.made = read_range(*m, dimension);
   if (const auto m = member("first_choice", {"min", "max"})) {
@@ -154,6 +174,11 @@ std::optional<Family> read_family(const JsonPlace& place) {
     family.temperature_coefficient = per_kelvin(m->member("max"));
   }
   if (const auto m = member("cold_loss", {"typ"}); m && m->has("typ")) family.cold_loss = per_kelvin(m->member("typ"));
+  if (const auto m = member("bias_loss", {"typ"}); m && m->has("typ")) {
+    family.bias_loss = m->member("typ").quantity(Dimension::fraction).value_or(0);
+    if (!(family.bias_loss >= 0 && family.bias_loss < 1)) m->fault("a share from 0 up to, but not, 1");
+  }
+  if (const auto m = member("further_limits", {"below", "above"})) read_further_limits(*m, family);
   if (family.key.empty()) return std::nullopt;
   return family;
 }

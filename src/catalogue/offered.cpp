@@ -7,12 +7,16 @@
 #include <bandwright/catalogue.hpp>
 #include <cmath>
 
-#include "catalogue/choice.hpp"
+#include "catalogue/offer.hpp"
+#include "catalogue/pairs.hpp"
+#include "catalogue/stock_offers.hpp"
 #include "units/constants.hpp"
 
 namespace bandwright {
 
 namespace {
+
+constexpr double kLoosest = 1.4;  // a cutoff that must be better than this either way takes no class 2 ceramic
 
 // The values of a series between two limits, rising. A decade is a power of ten that double holds exactly (or the
 // nearest quotient by one), so that each value equals its printed decimal.
@@ -52,9 +56,16 @@ double at_work(const Family& family, double value, double ambient) {
   return value * (1 - family.cold_loss * (kColdBegins - ambient));
 }
 
-OfferedValue offer(const OfferedFamily& from, double value, const Spec& spec) {
-  return {value, at_work(*from.family, value, spec.ambient.nominal), from.family, from.tolerance,
-          coarsest_series(value)};
+/// The family that takes the place of a polarised one: the one it names, else the first that has no polarity and no
+/// loss under bias; nullptr where none is made at the value.
+const Family* unpolarised_at(const Catalogue& catalogue, const Family& family, double value) {
+  if (!family.polarised) return nullptr;
+  const Family* named = catalogue.find_family(family.unpolarised);
+  if (named != nullptr && holds(named->made, value)) return named;
+  for (const Family& f : catalogue.families) {
+    if (f.kind == family.kind && !f.polarised && f.bias_loss == 0 && holds(f.made, value)) return &f;
+  }
+  return nullptr;
 }
 
 std::vector<double> candidate_values(const Choice& choice, const ValueRange& range) {
@@ -72,44 +83,100 @@ std::vector<double> candidate_values(const Choice& choice, const ValueRange& ran
   return values;
 }
 
+/// Each value from every family that may serve it, as sold.
+std::vector<OfferedValue> sold_values(const Catalogue& catalogue, const Spec& spec, Role role, const Choice& choice,
+                                      const std::vector<double>& values, bool pinned) {
+  std::vector<OfferedValue> list;
+  for (const double value : values) {
+    for (const OfferedFamily* from : choice.all_at(value)) {
+      const bool made = pinned || in_family_series(*from->family, rules_for(spec, role), value);
+      if (made && !is_too_loose(*from->family, spec, role)) list.push_back(offer(catalogue, spec, *from, value));
+    }
+  }
+  return list;
+}
+
+/// True where the stock holds enough of a part that is at least as tight: nobody would buy it.
+bool is_at_hand(const OfferedValue& sold, const std::vector<OfferedValue>& at_hand, int boards) {
+  return std::any_of(at_hand.begin(), at_hand.end(), [&](const OfferedValue& own) {
+    const bool enough = !own.stock->quantity || *own.stock->quantity >= static_cast<long>(kRoleCount) * boards;
+    return enough && same_value(own.value, sold.value) && own.tolerance.below <= sold.tolerance.below &&
+           own.tolerance.above <= sold.tolerance.above && std::isnan(own.stock->voltage_rating);
+  });
+}
+
 }  // namespace
 
+OfferedValue offer(const Catalogue& catalogue, const Spec& spec, const OfferedFamily& from, double value) {
+  OfferedValue o;
+  o.value = value;
+  o.working_value = at_work(*from.family, value, spec.ambient.nominal);
+  o.family = from.family;
+  o.unpolarised = unpolarised_at(catalogue, *from.family, value);
+  o.tolerance = from.tolerance;
+  o.series = coarsest_series(value);
+  o.unit_cost = from.family->unit_cost + from.family->unit_cost_per_value * value;
+  o.invented_cost = from.family->invented_cost;
+  return o;
+}
+
+bool is_too_loose(const Family& family, const Spec& spec, Role role) {
+  if (family.bias_loss == 0) return false;
+  const auto& cutoff = spec.requirement(role == Role::shunt ? Figure::upper_cutoff : Figure::lower_cutoff);
+  // a limit on one side alone is met with capacitance to spare
+  return cutoff && cutoff->upper / cutoff->lower < kLoosest * kLoosest;
+}
+
 std::vector<OfferedValue> offered_values(const Catalogue& catalogue, const Spec& spec, Role role) {
-  const PartRules& rules = rules_for(spec, role);
-  const Choice choice(catalogue, rules, info(role).kind);
+  const Choice choice(catalogue, rules_for(spec, role), info(role).kind);
   const auto& pinned = spec.parts.pinned[index(role)];
-  std::vector<OfferedValue> offered;
-  const auto offer_all = [&](double value) {
-    for (const OfferedFamily* from : choice.all_at(value)) {
-      if (pinned || in_family_series(*from->family, rules, value)) offered.push_back(offer(*from, value, spec));
-    }
-  };
-  if (pinned) {
-    offer_all(*pinned);
-    if (offered.empty()) offered.push_back(resolve_value(catalogue, spec, role, *pinned));
-    return offered;
+  const ValueRange range = pinned ? ValueRange{*pinned, *pinned} : allowed_range(spec, choice, role);
+  std::vector<OfferedValue> offered = stock_values(catalogue, spec, role, range);
+  if (!spec.parts.stock_only) {
+    const std::vector<double> values = pinned ? std::vector{*pinned} : candidate_values(choice, range);
+    std::vector<OfferedValue> sold = sold_values(catalogue, spec, role, choice, values, pinned.has_value());
+    std::erase_if(sold, [&](const OfferedValue& o) { return is_at_hand(o, offered, spec.parts.boards); });
+    offered.insert(offered.end(), sold.begin(), sold.end());
+    if (pinned && offered.empty()) offered.push_back(resolve_value(catalogue, spec, role, {*pinned}));
   }
-  for (const double value : candidate_values(choice, allowed_range(spec, choice, role))) offer_all(value);
   // In deep cold the smallest electrolytic may work below the largest film capacitor.
   std::stable_sort(offered.begin(), offered.end(),
                    [](const OfferedValue& x, const OfferedValue& y) { return x.working_value < y.working_value; });
   return offered;
 }
 
-OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, double value,
-                           std::string_view family) {
-  if (!(value > 0)) return {};  // the part is absent
+PartChoices choices_of(const PartValues& values) {
+  PartChoices choices;
+  for (std::size_t i = 0; i < kRoleCount; ++i) choices[i].value = values[i];
+  return choices;
+}
+
+OfferedValue resolve_value(const Catalogue& catalogue, const Spec& spec, Role role, const PartChoice& wanted) {
+  if (!(wanted.value > 0)) return {};  // the part is absent
+  if (wanted.connection != Connection::single) return resolve_pair(catalogue, spec, role, wanted);
   const PartRules& rules = rules_for(spec, role);
   const PartKind kind = info(role).kind;
+  if (const StockPart* own = wanted.from_stock ? find_stock(catalogue, kind, wanted) : nullptr)
+    return stock_offer(catalogue, spec, *own);
   const Choice choice(catalogue, rules, kind);
   for (const OfferedFamily& from : choice.families()) {
-    if (from.family->name == family || from.family->key == family) return offer(from, value, spec);
+    const bool named = from.family->name == wanted.family || from.family->key == wanted.family;
+    if (named) return offer(catalogue, spec, from, wanted.value);
   }
-  if (const OfferedFamily* from = choice.nearest(value)) return offer(*from, value, spec);
+  // a bipolar part stands in a polarised one's place, though no rule names it
+  for (const Family& f : catalogue.families) {
+    const bool named = f.kind == kind && (f.name == wanted.family || f.key == wanted.family);
+    if (const auto tolerance = named ? bought_tolerance(f, rules.tolerance) : std::nullopt)
+      return offer(catalogue, spec, {&f, *tolerance}, wanted.value);
+  }
+  if (const OfferedFamily* from = choice.nearest(wanted.value)) return offer(catalogue, spec, *from, wanted.value);
   // No family is as tight as asked for: the part is what it is, at its tightest.
   const Choice loose = Choice::tightest(catalogue, rules, kind);
-  if (const OfferedFamily* from = loose.nearest(value)) return offer(*from, value, spec);
-  return {value, value, nullptr, {}, coarsest_series(value)};
+  if (const OfferedFamily* from = loose.nearest(wanted.value)) return offer(catalogue, spec, *from, wanted.value);
+  OfferedValue unknown;
+  unknown.value = unknown.working_value = wanted.value;
+  unknown.series = coarsest_series(wanted.value);
+  return unknown;
 }
 
 }  // namespace bandwright

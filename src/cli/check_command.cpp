@@ -6,6 +6,7 @@
 #include <bandwright/fault.hpp>
 #include <cmath>
 
+#include "cli/agreement_text.hpp"
 #include "cli/commands.hpp"
 #include "cli/exit_status.hpp"
 #include "cli/shared_options.hpp"
@@ -46,17 +47,17 @@ std::vector<OptionGroup> options() {
   const OptionGroup parts = part_options();
   OptionGroup keys = spec_option_group();
   std::erase_if(keys.options, [&](const Option& option) { return is_named(parts, option.name); });
-  OptionGroup surroundings{"Assessment, catalogue and limits",
-                           {allocate_option(), response_option(), catalogue_option(), high_voltage_option()},
-                           false};
+  OptionGroup surroundings{
+      "Assessment, catalogue and limits",
+      {allocate_option(), alternates_option(), response_option(), catalogue_option(), high_voltage_option()},
+      false};
   return {parts, output_options(), surroundings, keys};
 }
 
 // What is to be recomputed.
 struct Subject {
   std::string device;
-  PartValues values{};
-  PartFamilies families;
+  PartChoices parts;
   std::optional<StoredCandidate> stored;  ///< from a result document
   bool altered = false;                   ///< the command line changed something of it
 };
@@ -80,8 +81,7 @@ void take_options(const Arguments& arguments, Subject& subject) {
     if (!text) continue;
     subject.altered = true;
     try {
-      subject.values[index(role.role)] = part_value(role, *text);
-      subject.families[index(role.role)].clear();
+      subject.parts[index(role.role)] = {part_value(role, *text)};
     } catch (const UsageError& fault) {
       if (!faults.empty()) faults += '\n';
       faults += fault.what();
@@ -101,12 +101,11 @@ Subject subject_of(const Arguments& arguments, const NamedText& input, const Spe
   if (is_result(input.text)) {
     subject.stored = read_candidate(input.text, input.name, rank);
     subject.device = subject.stored->device;
-    subject.values = subject.stored->values;
-    subject.families = subject.stored->families;
+    subject.parts = subject.stored->parts;
   } else if (pick) {
     throw UsageError("--pick: needs a result document, as written by bandwright design --format json");
   } else {
-    for (std::size_t i = 0; i < kRoleCount; ++i) subject.values[i] = spec.parts.pinned[i].value_or(0);
+    for (std::size_t i = 0; i < kRoleCount; ++i) subject.parts[i].value = spec.parts.pinned[i].value_or(0);
     if (spec.devices.size() == 1) subject.device = spec.devices.front();
   }
   subject.altered = !arguments.overrides.empty();
@@ -117,27 +116,13 @@ Subject subject_of(const Arguments& arguments, const NamedText& input, const Spe
 void demand_parts(const Subject& subject) {
   std::string missing;
   for (const RoleInfo& role : roles())
-    if (!role.may_be_absent && subject.values[index(role.role)] == 0)
+    if (!role.may_be_absent && subject.parts[index(role.role)].value == 0)
       missing += fmt::format("\n--{} is missing: {} {} is needed, for example from a result document or as an option",
                              option_of(role), role.designator, role.label);
   if (subject.device.empty()) missing += "\n--device is missing: the transistor's type is needed";
   if (!missing.empty()) throw UsageError(missing.substr(1));
-  if (subject.values[index(Role::bypass)] > 0 && subject.values[index(Role::emitter_bypassed)] == 0)
+  if (subject.parts[index(Role::bypass)].value > 0 && subject.parts[index(Role::emitter_bypassed)].value == 0)
     throw UsageError("--bypass: there is no resistor for it to bypass; give --emitter-bypassed, or --bypass none");
-}
-
-std::string agreement_text(const Agreement& agreement, const std::string& name, int rank) {
-  const std::string head = fmt::format("Candidate {} of {}: ", rank, name);
-  const std::string most = fmt::format("largest relative difference {:.2g}", agreement.largest);
-  if (agreement.differing.empty())
-    return head + fmt::format("all {} figures recomputed agree with the file, {}.", agreement.compared, most);
-  std::string names;
-  for (const Figure figure : agreement.differing) {
-    if (!names.empty()) names += ", ";
-    names += info(figure).label;
-  }
-  return head + fmt::format("{} of {} figures recomputed differ from the file ({}), {} in {}.",
-                            agreement.differing.size(), agreement.compared, names, most, info(agreement.worst).label);
 }
 
 // What the comparison with the file says; empty where there is nothing to compare.
@@ -167,11 +152,12 @@ int run_check(const Arguments& arguments) {
       read_spec(input.text, input.name, arguments.overrides, SpecUse::check, arguments.has("allow-high-voltage"));
   const Subject subject = subject_of(arguments, input, spec);
   demand_parts(subject);
-  const Catalogue catalogue = catalogue_of(arguments);
+  const Catalogue catalogue = catalogue_of(arguments, spec, input.name);
   DesignOptions choice;
   choice.with_response = arguments.has("with-response");
   choice.allocate = arguments.has("allocate");
-  const DesignResult result = check(spec, catalogue, subject.device, subject.values, choice, subject.families);
+  choice.alternates = arguments.has("alternates");
+  const DesignResult result = check(spec, catalogue, subject.device, subject.parts, choice);
   const Confirmation confirmation = confirm(subject, result, input.name);
   tell_notes(spec, format, arguments);
   std::string text = formatted(result, format, destination);

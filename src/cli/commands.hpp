@@ -35,6 +35,8 @@ int run(const std::vector<std::string>& words);
 Command design_command();
 Command check_command();
 Command compare_command();
+Command bom_command();
 Command catalogue_command();
+Command stock_command();
 
 }  // namespace bandwright::cli

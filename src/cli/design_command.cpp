@@ -31,6 +31,7 @@ std::vector<OptionGroup> options() {
       {{"rank", "ORDER", "what comes first in the list: " + orders_text()},
        {"threads", "N", "threads to use; the answer is the same on any number (default: as many as there are)"},
        allocate_option(),
+       alternates_option(),
        response_option(),
        catalogue_option(),
        {"print-spec", "", "print the spec with every default filled in, and search nothing"},
@@ -52,6 +53,7 @@ DesignOptions design_options(const Arguments& arguments) {
   choice.rank_by = rank_of(arguments);
   choice.with_response = arguments.has("with-response");
   choice.allocate = arguments.has("allocate");
+  choice.alternates = arguments.has("alternates");
   if (const auto threads = arguments.value("threads"))
     choice.threads = whole_number("threads", *threads, 1, kMostThreads);
   return choice;
@@ -85,7 +87,7 @@ int run_design(const Arguments& arguments) {
     return kMet;
   }
   const InterruptWatch watch;
-  const Catalogue catalogue = catalogue_of(arguments);
+  const Catalogue catalogue = catalogue_of(arguments, spec, input.name);
   const DesignResult result = search(spec, catalogue, choice, arguments.has("quiet"));
   tell_notes(spec, format, arguments);
   if (result.interrupted)

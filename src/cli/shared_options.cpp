@@ -2,7 +2,9 @@
 
 #include <fmt/format.h>
 
+#include <algorithm>
 #include <array>
+#include <filesystem>
 
 #include "cli/exit_status.hpp"
 #include "cli/terminal.hpp"
@@ -32,7 +34,7 @@ OptionGroup output_options() {
 
 OptionGroup spec_option_group() {
   OptionGroup group{"Keys of the spec (they override the file)", {}, true};
-  for (const OptionKey& key : spec_options()) group.options.push_back({key.option, "VALUE", key.help});
+  for (const OptionKey& key : spec_options()) group.options.push_back({key.option, key.flag ? "" : "VALUE", key.help});
   return group;
 }
 
@@ -40,6 +42,11 @@ Option catalogue_option() { return {"catalogue", "FOLDER", "add the JSON files o
 
 Option allocate_option() {
   return {"allocate", "", "the loosest tolerance of each part of the first candidate that still gives the yield"};
+}
+
+Option alternates_option() {
+  return {"alternates", "",
+          "next values up and down of every part, and transistors that may stand in, of each candidate"};
 }
 
 Option response_option() {
@@ -63,6 +70,28 @@ Format format_of(const Arguments& arguments) {
 Catalogue catalogue_of(const Arguments& arguments) {
   const auto folder = arguments.value("catalogue");
   return folder ? read_catalogue(*folder) : built_in_catalogue();
+}
+
+namespace {
+
+/// Beside the spec; a name given on the command line, and one that is not there, where the program runs.
+std::string stock_path(const std::string& stock, const std::string& spec_file, bool from_command_line) {
+  namespace fs = std::filesystem;
+  const fs::path beside = fs::path(spec_file).parent_path() / stock;
+  std::error_code ignored;
+  return !from_command_line && fs::exists(beside, ignored) ? beside.string() : stock;
+}
+
+}  // namespace
+
+Catalogue catalogue_of(const Arguments& arguments, const Spec& spec, const std::string& spec_file) {
+  Catalogue catalogue = catalogue_of(arguments);
+  if (spec.parts.stock.empty()) return catalogue;
+  const bool named_here = std::any_of(arguments.overrides.begin(), arguments.overrides.end(),
+                                      [](const Override& o) { return o.first == "stock"; });
+  const NamedText text = read_text(stock_path(spec.parts.stock, spec_file, named_here));
+  catalogue.stock = read_stock(text.text, text.name, catalogue);
+  return catalogue;
 }
 
 Destination destination_of(const Arguments& arguments) {

@@ -15,6 +15,7 @@ OptionGroup output_options();     ///< --format, --output, --quiet
 OptionGroup spec_option_group();  ///< every key of the spec
 Option catalogue_option();        ///< --catalogue
 Option allocate_option();         ///< --allocate
+Option alternates_option();       ///< --alternates
 Option response_option();         ///< --with-response
 Option high_voltage_option();     ///< --allow-high-voltage
 
@@ -23,6 +24,10 @@ Format format_of(const Arguments& arguments);
 
 /// The catalogue in force.
 Catalogue catalogue_of(const Arguments& arguments);
+
+/// The catalogue in force with the stock that a spec names; its file is looked for beside the spec, then where the
+/// program runs. `spec_file`: the name under which the spec was read.
+Catalogue catalogue_of(const Arguments& arguments, const Spec& spec, const std::string& spec_file);
 
 /// Where results go. Refuses to write over the file that was read.
 Destination destination_of(const Arguments& arguments);

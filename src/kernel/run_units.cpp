@@ -99,12 +99,20 @@ UnitRunner::UnitRunner(const Population& population, std::vector<Figure> figures
   for (const OperatingCondition& c : population.conditions) conditions_.push_back(warm_start(population, c));
 }
 
+namespace {
+
+bool is_drawn(const Population& p, std::size_t draw) {
+  if (draw < kCauseCount) return p.spread[draw].varies();
+  const std::size_t part = (draw - kCauseCount) % kRoleCount;
+  return draw < kCauseCount + kRoleCount ? p.temperature_coefficient[part] > 0 : p.pairs[part].is_pair;
+}
+
+}  // namespace
+
 void UnitRunner::draw(std::uint64_t seed, std::uint64_t first, std::size_t count, std::size_t stride) {
   draws_.assign(kDrawCount * stride, 0.5);
   for (std::size_t d = 0; d < kDrawCount; ++d) {
-    const bool drawn =
-        d < kCauseCount ? population_.spread[d].varies() : population_.temperature_coefficient[d - kCauseCount] > 0;
-    if (!drawn) continue;
+    if (!is_drawn(population_, d)) continue;
     for (std::size_t i = 0; i < count; ++i) draws_[d * stride + i] = unit_uniform(seed, first + i, d);
   }
 }
@@ -118,12 +126,12 @@ Analysis UnitRunner::alone(std::size_t unit, std::size_t condition, std::size_t 
 void UnitRunner::solve_left_over(UnitBlock& block) const {
   for (std::size_t c = 0; c < conditions_.size(); ++c) {
     for (std::size_t i = 0; i < block.units; ++i) {
-      Outcome& outcome = block.outcomes[c * block.stride + i];
-      if (outcome != Outcome::unsolved) continue;
+      UnitOutcome& outcome = block.outcomes[c * block.stride + i];
+      if (outcome != UnitOutcome::unsolved) continue;
       ++block.solved_alone;
       const Analysis a = alone(i, c, block.stride);
-      outcome = a.point.state == BiasState::active ? Outcome::active : Outcome::not_active;
-      if (outcome == Outcome::active && !probes_.empty()) {
+      outcome = a.point.state == BiasState::active ? UnitOutcome::active : UnitOutcome::not_active;
+      if (outcome == UnitOutcome::active && !probes_.empty()) {
         const Crossings peak = find_crossings({{a.transfer.numerator}, {a.transfer.denominator}}, 0);
         for (std::size_t k = 0; k < probes_.size(); ++k)
           block.ratios[(c * block.probes + k) * block.stride + i] = ratio_at(a, probes_[k], peak);
@@ -143,7 +151,7 @@ void UnitRunner::run(std::uint64_t seed, std::uint64_t first, std::size_t count,
   block.values.assign(conditions_.size() * block.figures * block.stride, kNotComputed);
   block.probes = probes_.size();
   block.ratios.assign(conditions_.size() * block.probes * block.stride, kNotComputed);
-  block.outcomes.assign(conditions_.size() * block.stride, Outcome::unsolved);
+  block.outcomes.assign(conditions_.size() * block.stride, UnitOutcome::unsolved);
   draw(seed, first, count, block.stride);
   UnitTask task;
   task.population = &population_;

@@ -21,7 +21,7 @@ struct UnitBlock {
   std::vector<double> values;
   std::size_t probes = 0;
   std::vector<double> ratios;
-  std::vector<Outcome> outcomes;
+  std::vector<UnitOutcome> outcomes;
   std::size_t solved_alone = 0;  ///< units at a condition that were left over by the lanes
 
   double value(std::size_t condition, std::size_t figure, std::size_t unit) const {
@@ -31,7 +31,7 @@ struct UnitBlock {
   double ratio(std::size_t condition, std::size_t probe, std::size_t unit) const {
     return ratios[(condition * probes + probe) * stride + unit];
   }
-  Outcome outcome(std::size_t condition, std::size_t unit) const { return outcomes[condition * stride + unit]; }
+  UnitOutcome outcome(std::size_t condition, std::size_t unit) const { return outcomes[condition * stride + unit]; }
 };
 
 /// The units of one population, by number.

@@ -61,6 +61,18 @@ T factor_of(const CauseSpread& spread, CauseScale scale, const T& x) {
   return scale == CauseScale::share ? T(1.0) + d : d;
 }
 
+/// What two parts of a pair make together, over their nominal value.
+template <class T>
+T pair_factor(const PairSpread& pair, bool uniform, const T& first, const T& second) {
+  const auto part = [&](const Tolerance& t, const T& u) {
+    const T x = uniform ? symmetric_uniform(u) : truncated_normal(u);
+    return T(1.0) + x * select(less(x, T(0.0)), T(t.below), T(t.above));
+  };
+  const T a = part(pair.tolerance[0], first), b = part(pair.tolerance[1], second);
+  const T w(pair.weight), rest(1.0 - pair.weight);
+  return pair.adds_up ? w * a + rest * b : T(1.0) / (w / a + rest / b);
+}
+
 /// The unit whose uniform numbers start at `draws`; `scales` as in the table of causes.
 template <class T>
 UnitDraw<T> draw_unit(const Population& p, const CauseScale* scales, const double* draws, std::size_t stride) {
@@ -72,6 +84,12 @@ UnitDraw<T> draw_unit(const Population& p, const CauseScale* scales, const doubl
     }
     const T u = loaded<T>(draws + i * stride);
     unit.factors.of[i] = factor_of(p.spread[i], scales[i], p.uniform ? symmetric_uniform(u) : truncated_normal(u));
+  }
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (!p.pairs[i].is_pair) continue;
+    const T first = loaded<T>(draws + i * stride);
+    const T second = loaded<T>(draws + (kCauseCount + kRoleCount + i) * stride);
+    unit.factors.of[i] = pair_factor(p.pairs[i], p.uniform, first, second);
   }
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     const bool drifts = p.temperature_coefficient[i] > 0 && p.printed[i] > 0;
@@ -228,11 +246,11 @@ void solve_at(const UnitTask& task, const WarmStart& from, const UnitDraw<T>& un
   const Transfer<T> response = transfer(gain_circuit(circuit, p.definition), h);
   const SettledBand<T> settled = settle_band(response, from, p.definition.frequency, task.crossings);
 
-  Outcome* outcomes = task.outcomes + condition * task.stride + first;
+  UnitOutcome* outcomes = task.outcomes + condition * task.stride + first;
   for (std::size_t i = 0; i < kLaneCount<T> && first + i < task.units; ++i) {
     const bool found = !is_open(current, i);
-    outcomes[i] = found && settled.holds(i, task.crossings) ? Outcome::active : Outcome::unsolved;
-    if (found && !is_active(device, t, i)) outcomes[i] = Outcome::not_active;
+    outcomes[i] = found && settled.holds(i, task.crossings) ? UnitOutcome::active : UnitOutcome::unsolved;
+    if (found && !is_active(device, t, i)) outcomes[i] = UnitOutcome::not_active;
   }
   for (std::size_t k = 0; k < task.probe_count; ++k) {
     const T ratio = probed(response, task.probes[k], settled.u_peak, T(0.5) * settled.gain_2);

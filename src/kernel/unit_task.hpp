@@ -26,10 +26,11 @@ struct Probe {
   double frequency = 0;                  ///< Hz
 };
 
-enum class Outcome : std::uint8_t { active, not_active, unsolved };
+enum class UnitOutcome : std::uint8_t { active, not_active, unsolved };
 
-/// Draws of a block: uniform numbers between 0 and 1, [draw][unit]. Draws are the causes, then each part's drift.
-inline constexpr std::size_t kDrawCount = kCauseCount + kRoleCount;
+/// Draws of a block: uniform numbers between 0 and 1, [draw][unit]. Draws are the causes, then each part's drift, then
+/// the second parts of pairs.
+inline constexpr std::size_t kDrawCount = kCauseCount + 2 * kRoleCount;
 
 struct UnitTask {
   const Population* population = nullptr;
@@ -44,9 +45,9 @@ struct UnitTask {
   bool crossings = true;   ///< false: no wanted figure needs the cutoffs
   const Probe* probes = nullptr;
   std::size_t probe_count = 0;
-  double* ratios = nullptr;     ///< [condition][probe][unit]: 2 |H|^2/A^2 at the probe, not beyond the peak
-  double* values = nullptr;     ///< [condition][figure][unit], rows of `stride`
-  Outcome* outcomes = nullptr;  ///< [condition][unit], rows of `stride`
+  double* ratios = nullptr;         ///< [condition][probe][unit]: 2 |H|^2/A^2 at the probe, not beyond the peak
+  double* values = nullptr;         ///< [condition][figure][unit], rows of `stride`
+  UnitOutcome* outcomes = nullptr;  ///< [condition][unit], rows of `stride`
 };
 
 }  // namespace bandwright

@@ -2,6 +2,8 @@
 #include <bandwright/purchase.hpp>
 #include <cmath>
 
+#include "purchase/polarity.hpp"
+
 namespace bandwright {
 
 namespace {
@@ -24,70 +26,142 @@ Dimension dimension_of(Role role) {
   return info(role).kind == PartKind::resistor ? Dimension::resistance : Dimension::capacitance;
 }
 
-// Without an operating point nothing better is known than that no node leaves the rails: the whole supply stands
-// across every part, and across the coupling capacitors what the outside adds.
-Stress rail_to_rail(const Spec& spec, const PartValues& values) {
-  const double rail = (spec.pnp() ? -1 : 1) * spec.highest_supply();
-  Stress bound;
-  bound.volts.fill(rail);
-  bound.volts[index(Role::input_coupling)] = spec.source.dc - rail;
-  bound.volts[index(Role::output_coupling)] = rail - spec.load.dc;
-  for (std::size_t i = 0; i < kResistorRoles; ++i)
-    if (values[i] > 0) bound.watts[i] = rail * rail / values[i];
-  return bound;
+void add(std::string& text, const std::string& more) {
+  if (!text.empty() && !more.empty()) text += "; ";
+  text += more;
 }
 
-Stress highest_stress(const Spec& spec, const Stage& stage, const Analysis& analysis) {
-  if (analysis.point.state != BiasState::active) return rail_to_rail(spec, stage.parts);
-  return stress(stage, analysis.point, spec.highest_supply(), spec.source.dc, spec.load.dc);
-}
+std::string volts_text(double v) { return format_quantity(v, Dimension::voltage, 3); }
 
-void add_reason(std::string* reason, const std::string& text) {
-  if (reason == nullptr) return;
-  if (!reason->empty()) *reason += "; ";
-  *reason += text;
-}
-
-std::string missing_rating(const Part& part, const Family& family) {
-  const RoleInfo& row = info(part.role);
-  std::string text = std::string(row.designator) + " " + row.label + ": no " + family.name + " is rated for " +
-                     format_quantity(std::fabs(part.volts), Dimension::voltage);
-  if (!family.power_ratings.empty())
-    text += " with " + format_quantity(part.watts, Dimension::power) + " at half its rating";
+std::string missing_rating(const Part& part, const OfferedValue& offered, const Derating& derating) {
+  const Family& family = *offered.family;
+  std::string text = part.designator + " " + info(part.role).label + ": no " + family.name +
+                     (offered.stock != nullptr ? " of the stock" : "") + " may stand " +
+                     volts_text(std::fabs(part.volts));
+  if (part.kind == PartKind::resistor) text += " and " + format_quantity(part.watts, Dimension::power, 3);
+  text += " at " + format_quantity(100 * voltage_share(derating, family), Dimension::fraction) + " % of its voltage";
+  if (part.kind == PartKind::resistor)
+    text += " and " + format_quantity(100 * derating.resistor_power, Dimension::fraction) + " % of its power";
   return text;
 }
 
-void rate(Part& part, const Family& family, std::string* reason) {
-  const auto row = rating_row(family, part.volts, part.watts);
-  if (!row) add_reason(reason, missing_rating(part, family));
-  const auto rating = [&](const std::vector<double>& ratings) {
-    if (ratings.empty()) return 0.0;
-    return row ? ratings[*row] : kNotComputed;
+std::string range_text(const StressRange& volts) {
+  if (volts.largest() == 0) return "there is no DC voltage across it";
+  return "its voltage lies between " + volts_text(volts.min) + " and " + volts_text(volts.max);
+}
+
+/// Which end of a polarised part is positive; where no end is, that is a reason not to build it.
+std::string polarity_of(const Part& part, const StressRange& volts, std::string& reason) {
+  if (keeps_one_sign(volts)) return "+ to " + part.nodes[part.volts < 0 ? 1 : 0];
+  add(reason, part.designator + " " + info(part.role).label + ": polarised, and " + range_text(volts));
+  return "none is right";
+}
+
+/// Why a part without polarity stands where one with it might have stood.
+std::string unpolarised_note(const Family& family, const StressRange& volts) {
+  if (family.kind != PartKind::capacitor) return "";
+  const char* word = family.electrolytic ? "bipolar" : "without polarity";
+  if (volts.changes_sign() || (family.electrolytic && !keeps_one_sign(volts)))
+    return std::string(word) + ": " + range_text(volts);
+  return family.electrolytic ? "bipolar, as asked for" : "";
+}
+
+/// The share of the role's voltage and power that falls to one part of a pair, this one and the other at the ends of
+/// their tolerances that make it largest.
+struct Share {
+  double volts = 1, watts = 1;
+};
+Share share_of(const OfferedValue& o, std::size_t half) {
+  if (o.connection == Connection::single) return {};
+  const PairedPart &own = o.pair[half], &other = o.pair[1 - half];
+  const bool resistor = o.family == nullptr || o.family->kind == PartKind::resistor;
+  // capacitors in series share DC by their leakage, which nobody knows: each stands all of it
+  if (!resistor) return {};
+  const double sign = o.connection == Connection::series ? 1 : -1;  // in parallel the smaller one takes more
+  const auto end = [](const PairedPart& p, double up) {
+    return p.value * (up > 0 ? 1 + p.tolerance.above : 1 - p.tolerance.below);
   };
-  part.voltage_rating = rating(family.voltage_ratings);
-  part.power_rating = rating(family.power_ratings);
+  const double a = end(own, sign), b = end(other, -sign);
+  if (sign < 0) return {1, b / (a + b)};
+  return {a / (a + b), a / (a + b)};
 }
 
-std::string polarity_text(const Part& part, const Family& family) {
-  if (!family.polarised) return "";
-  return "+ to " + part.nodes[part.volts < 0 ? 1 : 0];
+void take_stock(Part& part, const StockPart& stock) {
+  part.part_number = stock.part_number;
+  part.in_stock = stock.quantity;
+  part.from_stock = true;
+  add(part.note, stock.note);
 }
 
-Part bought_part(Role role, const OfferedValue& offered, const Stress& highest, const PartValues& values,
-                 std::string* reason) {
+/// One part of a pair as if it stood alone.
+OfferedValue single(const OfferedValue& offered, std::size_t half) {
+  if (offered.connection == Connection::single) return offered;
+  const PairedPart& p = offered.pair[half];
+  OfferedValue one = offered;
+  one.value = p.value;
+  one.tolerance = p.tolerance;
+  one.series = p.series;
+  one.stock = p.stock;
+  one.unit_cost = p.unit_cost;
+  return one;
+}
+
+/// "R1", of a pair "R1A" and "R1B".
+std::string designator_of(Role role, const OfferedValue& offered, std::size_t half) {
+  const std::string name = info(role).designator;
+  if (offered.connection == Connection::single) return name;
+  return name + (half == 0 ? "A" : "B");
+}
+
+/// What it is, before anything is known of its load.
+Part named_part(Role role, const OfferedValue& offered, std::size_t half, const PartValues& values) {
+  const OfferedValue one = single(offered, half);
   Part part;
+  part.designator = designator_of(role, offered, half);
+  part.kind = info(role).kind;
   part.role = role;
-  part.value = offered.value;
-  part.code = value_code(offered.value, dimension_of(role));
-  part.series = offered.series == nullptr ? "" : offered.series->name;
-  part.tolerance = offered.tolerance;
+  part.connection = offered.connection;
+  part.value = one.value;
+  part.code = value_code(one.value, dimension_of(role));
+  part.series = one.series == nullptr ? "" : one.series->name;
+  part.tolerance = one.tolerance;
   part.nodes = nodes(role, values);
-  part.volts = highest.volts[index(role)];
-  part.watts = highest.watts[index(role)];
-  if (offered.family == nullptr) return part;
-  part.family = offered.family->name;
-  rate(part, *offered.family, reason);
-  part.polarity = polarity_text(part, *offered.family);
+  if (offered.connection == Connection::series)
+    part.nodes[1 - half] = "between " + designator_of(role, offered, 0) + " and " + designator_of(role, offered, 1);
+  part.unit_cost = one.unit_cost;
+  part.invented_cost = one.invented_cost;
+  return part;
+}
+
+void set_rating(Part& part, const OfferedValue& one, const Derating& derating, std::string& reason) {
+  const auto rating = rating_that_holds(one, derating, part.volts, part.watts);
+  if (!rating) add(reason, missing_rating(part, one, derating));
+  const auto stated = [&](double r) { return rating ? (std::isnan(r) ? 0 : r) : kNotComputed; };
+  part.voltage_rating = stated(rating.value_or(Rating{}).voltage);
+  part.power_rating = part.kind == PartKind::resistor ? stated(rating.value_or(Rating{}).power) : 0;
+}
+
+/// `half`: which part of a pair.
+Part bought_part(const Spec& spec, Role role, const OfferedValue& offered, std::size_t half, const WorstStress& stress,
+                 const PartValues& values, std::string& reason) {
+  const OfferedValue one = single(offered, half);
+  const StressRange &volts = stress.volts[index(role)], &watts = stress.watts[index(role)];
+  const Share share = share_of(offered, half);
+  Part part = named_part(role, offered, half, values);
+  part.volts = share.volts * (-volts.min > volts.max ? volts.min : volts.max);
+  part.watts = part.kind == PartKind::resistor ? share.watts * watts.max : 0;
+  if (one.family == nullptr) return part;
+  part.family = one.family->name;
+  part.electrolytic = one.family->electrolytic;
+  part.temperature_coefficient = one.family->temperature_coefficient;
+  set_rating(part, one, spec.parts.derating, reason);
+  if (one.family->polarised)
+    part.polarity = polarity_of(part, volts, reason);
+  else
+    add(part.note, unpolarised_note(*one.family, volts));
+  if (one.stock != nullptr) take_stock(part, *one.stock);
+  if (offered.connection != Connection::single)
+    add(part.note, std::string("in ") + word(offered.connection) + " with " + designator_of(role, offered, 1 - half));
   return part;
 }
 
@@ -107,17 +181,48 @@ std::array<std::string, 2> nodes(Role role, const PartValues& values) {
   return result;
 }
 
-std::vector<Part> parts_list(const Spec& spec, const OfferedParts& parts, const Stage& stage, const Analysis& analysis,
+std::vector<Part> parts_list(const Spec& spec, const OfferedParts& parts, const WorstStress& stress,
                              std::string* reason) {
-  const Stress highest = highest_stress(spec, stage, analysis);
   PartValues values{};
   for (std::size_t i = 0; i < kRoleCount; ++i) values[i] = parts[i].value;
+  std::string missing;
   std::vector<Part> list;
   for (const RoleInfo& row : roles()) {
     const OfferedValue& offered = parts[index(row.role)];
-    if (offered.value > 0) list.push_back(bought_part(row.role, offered, highest, values, reason));
+    if (!(offered.value > 0)) continue;
+    const std::size_t halves = offered.connection == Connection::single ? 1 : 2;
+    for (std::size_t half = 0; half < halves; ++half)
+      list.push_back(bought_part(spec, row.role, offered, half, stress, values, missing));
   }
+  if (reason != nullptr) *reason = missing;
   return list;
+}
+
+Part transistor_part(const Catalogue& catalogue, const std::string& type, const WorstStress& stress) {
+  Part part;
+  part.designator = "Q1";
+  part.kind = PartKind::transistor;
+  part.code = type;
+  part.volts = stress.collector_emitter_voltage.max;
+  part.watts = stress.dissipation.max;
+  if (const Transistor* t = catalogue.find_transistor(type)) {
+    part.code = t->type;
+    part.family = t->pnp ? "PNP transistor" : "NPN transistor";
+    part.voltage_rating = t->collector_emitter_breakdown.max;
+    part.power_rating = t->power_limit.max;
+    part.unit_cost = t->unit_cost;
+    part.invented_cost = t->invented_cost;
+  }
+  for (const StockPart& s : catalogue.stock.parts) {
+    if (s.kind != PartKind::transistor || s.type != part.code) continue;
+    if (!std::isnan(s.unit_cost)) {
+      part.unit_cost = s.unit_cost;
+      part.invented_cost = false;
+    }
+    take_stock(part, s);
+    break;
+  }
+  return part;
 }
 
 }  // namespace bandwright

@@ -15,6 +15,7 @@ namespace {
 constexpr double kErrorStep = 0.05;
 constexpr double kSensitivityStep = 1.05;
 constexpr double kCurrentStep = 1.02;  // supply currents closer than this are alike
+constexpr double kCostStep = 1e-6;     // of a cost: closer ones differ by rounding
 constexpr double kCurrentApart = 1.5;
 constexpr double kPartApart = 1.2;
 constexpr int kPartsApart = 3;
@@ -50,6 +51,7 @@ const std::vector<RankOrder>& rank_orders() {
       {RankBy::worst_case, "worst-case", "largest margin at the worst corner first"},
       {RankBy::current, "current", "smallest supply current first"},
       {RankBy::parts, "parts", "fewest parts first, then the fewest distinct values"},
+      {RankBy::cost, "cost", "lowest cost of all parts first"},
   };
   return rows;
 }
@@ -68,6 +70,8 @@ double measure(const RankKey& k, RankBy by) {
       return std::floor(ln(std::max(k.supply_current, 1e-12)) / ln(kCurrentStep) + 0.5);
     case RankBy::parts:
       return 100 * k.parts + k.distinct_values;
+    case RankBy::cost:
+      return std::isnan(k.cost) ? std::numeric_limits<double>::max() : std::floor(k.cost / kCostStep + 0.5);
     case RankBy::capability:
     case RankBy::yield:
     case RankBy::worst_case:
@@ -104,10 +108,19 @@ int compare_rest(const RankKey& a, const RankKey& b, RankBy by) {
   return a.values < b.values ? -1 : b.values < a.values ? 1 : 0;
 }
 
+/// Fewer parts to buy come first; where the capability leads, only among stages that are producible at all.
+int buying_class(const RankKey& k, RankBy by) {
+  if (k.to_buy < 0) return 0;
+  const bool producible = !wants_capability(by) || k.capability >= kProducible;
+  return producible ? k.to_buy : std::numeric_limits<int>::max();
+}
+
 template <class Item>
 int compare(const Item& a, const Item& b, const RankKey& ka, const RankKey& kb, RankBy by) {
   const int la = leading_class(ka.error, by), lb = leading_class(kb.error, by);
   if (la != lb) return la < lb ? -1 : 1;
+  const int ba = buying_class(ka, by), bb = buying_class(kb, by);
+  if (ba != bb) return ba < bb ? -1 : 1;
   const double ma = measure(a, by), mb = measure(b, by);
   if (ma != mb) return ma < mb ? -1 : 1;
   return compare_rest(ka, kb, by);

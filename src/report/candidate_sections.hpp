@@ -10,6 +10,9 @@ namespace bandwright {
 /// What to buy and how to fit it.
 void add_parts(TextSheet& sheet, const Candidate& candidate);
 
+/// What each part stands at its worst corner beside its rating; what stands close to nothing is only counted.
+void add_stress(TextSheet& sheet, const Candidate& candidate, const Spec& spec);
+
 /// Figures beside what was asked, then the operating point.
 void add_figures(TextSheet& sheet, const Candidate& candidate, const Spec& spec);
 void add_operating_point(TextSheet& sheet, const Candidate& candidate);
@@ -28,5 +31,8 @@ void add_causes(TextSheet& sheet, const Assessment& assessment, const Candidate&
 
 /// Which parts need a tight tolerance.
 void add_allocation(TextSheet& sheet, const Allocation& allocation, const Spec& spec);
+
+/// What may stand in for the parts: next values, transistors.
+void add_alternates(TextSheet& sheet, const Alternates& alternates, const Candidate& candidate, const Spec& spec);
 
 }  // namespace bandwright

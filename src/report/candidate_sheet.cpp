@@ -43,6 +43,7 @@ bool is_active(const Candidate& candidate) { return candidate.analysis.point.sta
 void add_candidate(TextSheet& sheet, const Candidate& candidate, const Spec& spec) {
   sheet.heading(fmt::format("Candidate {}: {}, {}", candidate.rank, candidate.device, candidate.variant));
   add_parts(sheet, candidate);
+  add_stress(sheet, candidate, spec);
   if (is_active(candidate)) {
     add_figures(sheet, candidate, spec);
     add_assessment(sheet, candidate, spec);
@@ -50,6 +51,7 @@ void add_candidate(TextSheet& sheet, const Candidate& candidate, const Spec& spe
     add_operating_point(sheet, candidate);
     add_pole_model(sheet, candidate);
   }
+  if (candidate.alternates) add_alternates(sheet, *candidate.alternates, candidate, spec);
   add_notes(sheet, candidate);
 }
 

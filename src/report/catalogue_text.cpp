@@ -215,6 +215,16 @@ std::string write_transistor(const Catalogue& catalogue, const Transistor& trans
   return sheet.text();
 }
 
+namespace {
+
+std::string cost_text(const Family& family) {
+  std::string text = fmt::format("{:.4g}", family.unit_cost);
+  if (family.unit_cost_per_value > 0) text += fmt::format(" and {:.4g} for each uF", 1e-6 * family.unit_cost_per_value);
+  return text + (family.invented_cost ? ", invented for demonstration" : "");
+}
+
+}  // namespace
+
 std::string write_family(const Catalogue& catalogue, const Family& family) {
   TextSheet sheet{{}};
   const Dimension dimension = dimension_of(family);
@@ -232,7 +242,16 @@ std::string write_family(const Catalogue& catalogue, const Family& family) {
   grid.add({"polarised", family.polarised ? "yes" : "no"});
   if (family.cold_loss > 0)
     grid.add({"cold", fmt::format("loses {:.3g} % a kelvin below 20 °C", 100 * family.cold_loss)});
-  if (family.bias_dependent) grid.add({"bias", "loses capacitance under DC voltage; refused until that is counted"});
+  if (family.bias_loss > 0)
+    grid.add(
+        {"bias", fmt::format("loses {:.3g} % at its rated DC voltage, in proportion below", 100 * family.bias_loss)});
+  if (family.further_limits != Tolerance{})
+    grid.add(
+        {"temperature and ageing", fmt::format("-{:.3g}/+{:.3g} % beyond the tolerance",
+                                               100 * family.further_limits.below, 100 * family.further_limits.above)});
+  if (!family.unpolarised.empty())
+    grid.add({"where the polarity is not settled", family.unpolarised + " in its place"});
+  if (std::isfinite(family.unit_cost)) grid.add({"unit cost", cost_text(family)});
   std::erase_if(grid.rows, [](const auto& row) { return row[1].empty(); });
   sheet.grid(grid);
   if (family.provenance.empty()) return sheet.text();

@@ -4,6 +4,8 @@
 #include <cmath>
 
 #include "report/json_assessment.hpp"
+#include "report/json_parts.hpp"
+#include "report/json_stress.hpp"
 #include "report/shown_figures.hpp"
 
 namespace bandwright {
@@ -39,40 +41,6 @@ Json device_parameters(const Candidate& candidate, Notes& notes) {
   out["collector_cutoff_current"] = p.cutoff_current;
   out["saturation_voltage"] = p.saturation_voltage;
   out["thermal_resistance"] = p.thermal_resistance;
-  return out;
-}
-
-Json text_or_null(const std::string& text) { return text.empty() ? Json(nullptr) : Json(text); }
-
-Json part(const Part& part, const Candidate& candidate, Notes& notes) {
-  const RoleInfo& role = info(part.role);
-  const bool resistor = role.kind == PartKind::resistor;
-  const std::string field = std::string("parts.") + role.designator + ".";
-  const char* beyond = "the family has no rating above the stress";
-  Json out;
-  out["designator"] = role.designator;
-  out["role"] = role.key;
-  out["kind"] = resistor ? "resistor" : "capacitor";
-  out["value"] = part.value;
-  out["value_code"] = part.code;
-  out["series"] = notes.text(part.series, field + "series", "the value stands in no series");
-  out["tolerance"] = {-part.tolerance.below, part.tolerance.above};
-  out["family"] = part.family;
-  out["power_rating"] = resistor ? notes.number(part.power_rating, field + "power_rating", beyond) : Json(nullptr);
-  out["voltage_rating"] = notes.number(part.voltage_rating, field + "voltage_rating", beyond);
-  out["polarity"] = text_or_null(part.polarity);
-  out["nodes"] = part.nodes;
-  out["part_number"] = part.part_number;
-  out["working_value"] = candidate.working_values[index(part.role)];
-  out["highest_voltage"] = notes.number(part.volts, field + "highest_voltage", "no operating point");
-  if (resistor)
-    out["highest_dissipation"] = notes.number(part.watts, field + "highest_dissipation", "no operating point");
-  return out;
-}
-
-Json parts(const Candidate& candidate, Notes& notes) {
-  Json out = Json::array();
-  for (const Part& one : candidate.parts) out.push_back(part(one, candidate, notes));
   return out;
 }
 
@@ -166,7 +134,9 @@ Json candidate_document(const Candidate& candidate, const Spec& spec) {
   out["device"] = candidate.device;
   out["device_parameters"] = device_parameters(candidate, notes);
   out["packages"] = packages(candidate);
-  out["parts"] = parts(candidate, notes);
+  out["parts"] = part_documents(candidate, notes);
+  out["transistor"] = transistor_document(candidate, notes);
+  add_stress_fields(out, candidate, notes);
   out["figures"] = figures_of(candidate, notes);
   out["pole_model"] = pole_model(candidate, notes);
   out["poles"] = roots(candidate.poles.poles);
@@ -180,6 +150,7 @@ Json candidate_document(const Candidate& candidate, const Spec& spec) {
   add_assessment_fields(out, candidate, spec, notes);
   out["non_dominated"] = candidate.non_dominated;
   add_allocation_fields(out, candidate, notes);
+  add_alternates_fields(out, candidate, spec, notes);
   add_picture_fields(out, candidate, notes);
   out["notes"] = notes.to_json();
   return out;

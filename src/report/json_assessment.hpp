@@ -14,6 +14,9 @@ void add_assessment_fields(Json& candidate_document, const Candidate& candidate,
 /// The tolerance allocation; nothing where there is none.
 void add_allocation_fields(Json& candidate_document, const Candidate& candidate, Notes& notes);
 
+/// What may stand in for the parts; null where it was not asked for.
+void add_alternates_fields(Json& candidate_document, const Candidate& candidate, const Spec& spec, Notes& notes);
+
 /// Response, histograms and node voltages; nothing where they were not asked for.
 void add_picture_fields(Json& candidate_document, const Candidate& candidate, Notes& notes);
 

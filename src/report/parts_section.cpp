@@ -11,7 +11,7 @@ namespace {
 
 // What the part must stand: a resistor's power, a capacitor's voltage.
 std::string rating_text(const Part& part) {
-  const bool resistor = info(part.role).kind == PartKind::resistor;
+  const bool resistor = part.kind == PartKind::resistor;
   const double rating = resistor ? part.power_rating : part.voltage_rating;
   if (!std::isfinite(rating)) return "none holds";
   return rating == 0 ? "" : format_quantity(rating, resistor ? Dimension::power : Dimension::voltage);
@@ -20,7 +20,7 @@ std::string rating_text(const Part& part) {
 std::vector<std::string> part_row(const Part& part) {
   const RoleInfo& role = info(part.role);
   const Dimension dimension = role.kind == PartKind::resistor ? Dimension::resistance : Dimension::capacitance;
-  return {role.designator,
+  return {part.designator,
           role.label,
           format_quantity(part.value, dimension),
           part.code,
@@ -28,7 +28,12 @@ std::vector<std::string> part_row(const Part& part) {
           tolerance_text(part.tolerance),
           short_family(part.family, part.role),
           rating_text(part),
-          part.polarity};
+          part.polarity,
+          part.part_number};
+}
+
+void add_note(TextSheet& sheet, const Part& part) {
+  if (!part.note.empty()) sheet.line(part.designator + ": " + part.note);
 }
 
 }  // namespace
@@ -36,13 +41,17 @@ std::vector<std::string> part_row(const Part& part) {
 void add_parts(TextSheet& sheet, const Candidate& candidate) {
   sheet.heading("Parts");
   TextGrid grid;
-  grid.columns = {{"part", false},      {"role", false},   {"value", true},   {"code", false},    {"series", false},
-                  {"tolerance", false}, {"family", false}, {"rating", false}, {"polarity", false}};
-  grid.flexible = {6, 1, 8};
+  grid.columns = {{"part", false},     {"role", false},       {"value", true},   {"code", false},
+                  {"series", false},   {"tolerance", false},  {"family", false}, {"rating", false},
+                  {"polarity", false}, {"part number", false}};
+  grid.flexible = {6, 1, 8, 9};
   grid.dispensable = {4};
   for (const Part& part : candidate.parts) grid.add(part_row(part));
-  grid.add({"Q1", "transistor", candidate.device, "", "", "", candidate.parameters.pnp ? "PNP" : "NPN", "", ""});
+  grid.add({"Q1", "transistor", candidate.device, "", "", "", candidate.parameters.pnp ? "PNP" : "NPN", "", "",
+            candidate.transistor.part_number});
   sheet.grid(grid);
+  for (const Part& part : candidate.parts) add_note(sheet, part);
+  add_note(sheet, candidate.transistor);
   for (const Package& one : candidate.packages) {
     const std::string note = one.note.empty() ? "" : "; " + one.note;
     sheet.line(fmt::format("Q1 in {}: leads {}{} ({})", one.name, one.lead_order, note, describe(one.provenance)));

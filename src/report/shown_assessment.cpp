@@ -87,9 +87,13 @@ std::string counted(std::size_t units) {
   return text;
 }
 
-std::string capability_text(double capability, const Assessment& assessment) {
+std::string capability_text(double capability, bool from_moments) {
   if (std::isnan(capability)) return "-";
-  return fmt::format("{}{:.2f}", assessment.from_moments && capability != 0 ? "~" : "", capability);
+  return fmt::format("{}{:.2f}", from_moments && capability != 0 ? "~" : "", capability);
+}
+
+std::string capability_text(double capability, const Assessment& assessment) {
+  return capability_text(capability, assessment.from_moments);
 }
 
 std::string capability_definition(bool marked) {

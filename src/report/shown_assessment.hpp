@@ -34,6 +34,7 @@ std::string counted(std::size_t units);
 
 /// "1.41", "~1.41" where it rests on mean and 3 sigma, "-" where it was not computed.
 std::string capability_text(double capability, const Assessment& assessment);
+std::string capability_text(double capability, bool from_moments);
 
 /// What capability means, and the mark before it where it stands.
 std::string capability_definition(bool marked);

@@ -6,6 +6,7 @@
 #include <nlohmann/json.hpp>
 
 #include "report/shown_figures.hpp"
+#include "report/stored_result_parts.hpp"
 #include "units/constants.hpp"
 
 namespace bandwright {
@@ -39,40 +40,6 @@ const Json& candidate_of(const Json& document, std::string_view name, int rank) 
       list.empty() ? "a result with at least one candidate" : "a rank from 1 to " + std::to_string(list.size());
   refuse(at(name, "candidates"), "no candidate of rank " + std::to_string(rank), range);
 }
-
-// Reads the part list, collecting every fault.
-class PartReader {
-public:
-  explicit PartReader(std::string path) : path_(std::move(path)) {}
-
-  void read(const Json& part, std::size_t position) {
-    const std::string where = path_ + "[" + std::to_string(position) + "]";
-    const auto role = part.is_object() && part.contains("role") && part["role"].is_string()
-                          ? find_role(part["role"].get<std::string>())
-                          : std::nullopt;
-    if (!role) return add(where + ".role", part, "role", "a role such as upper_divider");
-    if (!part.contains("value") || !part["value"].is_number() || !(part["value"].get<double>() > 0))
-      return add(where + ".value", part, "value", "a number above 0, in ohm or farad");
-    if (values_[index(*role)] != 0) return add(where + ".role", part, "role", "each role once");
-    values_[index(*role)] = part["value"].get<double>();
-    if (part.contains("family") && part["family"].is_string())
-      families_[index(*role)] = part["family"].get<std::string>();
-  }
-  const PartValues& values() const { return values_; }
-  const PartFamilies& families() const { return families_; }
-  const std::vector<Fault>& faults() const { return faults_; }
-
-private:
-  void add(const std::string& where, const Json& part, const char* key, const std::string& expected) {
-    const std::string found = part.is_object() && part.contains(key) ? part[key].dump() : "";
-    faults_.push_back({where, found, expected, ""});
-  }
-
-  std::string path_;
-  PartValues values_{};
-  PartFamilies families_;
-  std::vector<Fault> faults_;
-};
 
 FigureValues figures_of(const Json& candidate) {
   FigureValues values;
@@ -120,10 +87,9 @@ StoredCandidate read_candidate(std::string_view json, std::string_view name, int
   } else {
     faults.push_back({path + ".parts", "", "an array of parts, each with role and value", ""});
   }
+  stored.parts = reader.finish();
   faults.insert(faults.end(), reader.faults().begin(), reader.faults().end());
   if (!faults.empty()) throw InputError(faults);
-  stored.values = reader.values();
-  stored.families = reader.families();
   stored.has_figures = candidate.contains("figures") && candidate["figures"].is_object();
   if (stored.has_figures) stored.figures = figures_of(candidate);
   return stored;

@@ -26,6 +26,17 @@ int nearest(const std::vector<OfferedValue>& offered, double value) {
   return static_cast<int>((lower ? below : above) - offered.begin());
 }
 
+void add_stock(const Catalogue& catalogue, DesignSpace& space) {
+  const std::string& type = space.device->parameters.type;
+  if (const Transistor* t = catalogue.find_transistor(type)) space.unit_cost = t->unit_cost;
+  space.has_stock = !catalogue.stock.parts.empty();
+  for (const StockPart& s : catalogue.stock.parts) {
+    if (s.kind != PartKind::transistor || s.type != type) continue;
+    space.device_in_stock = true;
+    if (!std::isnan(s.unit_cost)) space.unit_cost = s.unit_cost;
+  }
+}
+
 }  // namespace
 
 DesignSpaces design_spaces(const Spec& spec, const Catalogue& catalogue, const std::vector<DerivedDevice>& devices) {
@@ -37,7 +48,11 @@ DesignSpaces design_spaces(const Spec& spec, const Catalogue& catalogue, const s
   for (std::size_t d = 0; d < devices.size(); ++d) {
     for (const Variant& v : variants()) {
       if (!fits_pins(v, spec)) continue;
-      DesignSpace space{d, &devices[d], &v, {}};
+      DesignSpace space;
+      space.device_index = d;
+      space.device = &devices[d];
+      space.variant = &v;
+      add_stock(catalogue, space);
       bool complete = true;
       for (std::size_t i = 0; i < kRoleCount; ++i) {
         if (!v.present[i]) continue;
@@ -48,6 +63,13 @@ DesignSpaces design_spaces(const Spec& spec, const Catalogue& catalogue, const s
     }
   }
   return all;
+}
+
+double combinations(const DesignSpace& space) {
+  double product = 1;
+  for (std::size_t i = 0; i < kRoleCount; ++i)
+    if (space.has(i)) product *= static_cast<double>(space.offered[i]->size());
+  return product;
 }
 
 PartValues working_values(const DesignSpace& space, const GridPoint& point) {
@@ -64,6 +86,34 @@ OfferedParts offered_parts(const DesignSpace& space, const GridPoint& point) {
     if (space.has(i)) parts[i] = space.at(i, point);
   }
   return parts;
+}
+
+double unit_cost(const DesignSpace& space, const GridPoint& point) {
+  double cost = space.unit_cost;
+  for (std::size_t i = 0; i < kRoleCount; ++i)
+    if (space.has(i)) cost += space.at(i, point).unit_cost;
+  return cost;
+}
+
+int to_buy(const DesignSpace& space, const GridPoint& point) {
+  int count = space.device_in_stock ? 0 : 1;
+  for (std::size_t i = 0; i < kRoleCount; ++i) {
+    if (!space.has(i)) continue;
+    const OfferedValue& part = space.at(i, point);
+    if (part.connection == Connection::single) {
+      count += part.stock == nullptr;
+    } else {
+      for (const PairedPart& half : part.pair) count += half.stock == nullptr;
+    }
+  }
+  return count;
+}
+
+int next_at_hand(const DesignSpace& space, std::size_t role, int index, int step) {
+  const auto& offered = *space.offered[role];
+  for (int i = index + step; i >= 0 && i < static_cast<int>(offered.size()); i += step)
+    if (offered[static_cast<std::size_t>(i)].stock != nullptr) return i;
+  return -1;
 }
 
 GridPoint snap(const DesignSpace& space, const PartValues& values) {

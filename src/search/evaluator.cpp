@@ -41,19 +41,33 @@ CauseWidths cause_widths(const Spec& spec, const DesignSpace& space, const GridP
   CauseWidths widths{};
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     if (space.has(i))
-      widths[i] = assessed_half_width(spec, static_cast<Cause>(i), half_width(space.at(i, point).tolerance));
+      widths[i] = assessed_half_width(spec, static_cast<Cause>(i), half_width(tolerance_at_work(space.at(i, point))));
   }
   widths[index(Cause::current_gain)] =
       assessed_half_width(spec, Cause::current_gain, gain_half_width(space.device->parameters, collector_current));
   return widths;
 }
 
-Evaluator::Evaluator(const Spec& spec, const DesignSpace& space, RankBy by)
-    : spec_(spec), space_(space), by_(by), definition_(gain_definition(spec)), around_(surroundings(spec)) {
+namespace {
+
+/// The population of a space before any part is chosen.
+Population units_of(const Spec& spec, const DesignSpace& space) {
   Analysis anywhere;
   anywhere.point.collector_current = anywhere.point.gain_at_zero_vce = 1;
   anywhere.point.junction_temperature = spec.ambient.nominal;
-  units_ = population_of(spec, space.device->parameters, {}, anywhere);
+  return population_of(spec, space.device->parameters, {}, anywhere);
+}
+
+}  // namespace
+
+Evaluator::Evaluator(const Spec& spec, const DesignSpace& space, RankBy by)
+    : spec_(spec),
+      space_(space),
+      by_(by),
+      definition_(gain_definition(spec)),
+      around_(surroundings(spec)),
+      units_(units_of(spec, space)),
+      loads_(spec, space, units_) {
   fixed_widths_ = relative_widths(units_, spec.ambient.nominal);
   for (const OperatingCondition& c : units_.conditions) {
     warmest_ = std::max(warmest_, std::fabs(c.ambient - kReferenceTemperature));
@@ -69,43 +83,29 @@ Evaluator::Packed Evaluator::pack(const GridPoint& p) {
   return packed;
 }
 
-Stage Evaluator::stage_at(const GridPoint& point) const {
-  return {working_values(space_, point), &space_.device->parameters, around_};
+Stage Evaluator::stage_at(const GridPoint& point) {
+  Stage stage{working_values(space_, point), &space_.device->parameters, around_};
+  if (!loads_.has_bias_loss()) return stage;
+  const OperatingPoint& nominal = prepared(point, stage).bias.point;
+  if (nominal.state != BiasState::active) return stage;
+  const PartValues factors = loads_.bias_factors(point, nominal);
+  for (std::size_t i = 0; i < kRoleCount; ++i) stage.parts[i] *= factors[i];
+  return stage;
 }
 
-/// 0 where every part has a rating that holds.
-double Evaluator::overload(const GridPoint& point, const Stress& s) const {
-  double worst = 0;
-  for (std::size_t i = 0; i < kRoleCount; ++i) {
-    if (!space_.has(i)) continue;
-    const Family& family = *space_.at(i, point).family;
-    if (rating_row(family, s.volts[i], s.watts[i])) continue;
-    const bool by_power = !family.power_ratings.empty();
-    worst = std::max(worst, by_power ? s.watts[i] / family.power_ratings.back()
-                                     : std::fabs(s.volts[i]) / family.voltage_ratings.back());
-  }
-  return worst;
-}
-
-const Evaluator::Prepared& Evaluator::prepared(const GridPoint& point, const Stage& stage,
-                                               const Circuit<double>& circuit) {
+const Evaluator::Prepared& Evaluator::prepared(const GridPoint& point, const Stage& stage) {
   if (prepared_.size() >= kKeptBiases) prepared_.clear();
   const auto [place, is_new] = prepared_.try_emplace(pack(point).resistors);
-  if (is_new) {
-    place->second.bias = nominal_bias(stage, circuit);
-    const OperatingPoint& nominal = place->second.bias.point;
-    if (nominal.state == BiasState::active) {
-      place->second.stress = stress(stage, nominal, spec_.highest_supply(), spec_.source.dc, spec_.load.dc);
-    }
-  }
+  if (is_new) place->second = {nominal_bias(stage, circuit_of<double>(stage)), loads_.resistors_are_clear(point)};
   return place->second;
 }
 
 Analysis Evaluator::analysis(const GridPoint& point) {
   ++evaluations_;
   const Stage stage = stage_at(point);
-  const Circuit<double> circuit = circuit_of<double>(stage);
-  return analyse_response(stage, circuit, prepared(point, stage, circuit).bias, definition_);
+  Analysis a = analyse_response(stage, circuit_of<double>(stage), prepared(point, stage).bias, definition_);
+  a.figures[index(Figure::cost)] = unit_cost(space_, point);
+  return a;
 }
 
 Evaluator::Known& Evaluator::known(const GridPoint& point) {
@@ -116,12 +116,14 @@ Evaluator::Known& Evaluator::known(const GridPoint& point) {
 double Evaluator::error(const GridPoint& point) {
   Known& k = known(point);
   if (!std::isnan(k.error)) return k.error;
-  ++evaluations_;
+  if (const double lacking = loads_.shortage(point); lacking > 0) return k.error = kWorstError * (1 + lacking);
   const Stage stage = stage_at(point);
-  const Circuit<double> circuit = circuit_of<double>(stage);
-  const Prepared& p = prepared(point, stage, circuit);
-  if (const double over = overload(point, p.stress); over > 0) return k.error = kWorstError * (1 + over);
-  const Analysis a = analyse_response(stage, circuit, p.bias, definition_);
+  const auto& [bias, clear] = prepared(point, stage);
+  if (bias.point.state == BiasState::active) {
+    if (const double over = loads_.excess(point, bias.point, clear); over > 0)
+      return k.error = kWorstError * (1 + over);
+  }
+  const Analysis a = analysis(point);
   k.supply_current = a.figures[index(Figure::supply_current)];
   return k.error = search_error(spec_, a, stage.parts, space_.device->parameters);
 }
@@ -140,11 +142,12 @@ const std::vector<NominalBias>& Evaluator::at_conditions(const GridPoint& point,
   return place->second;
 }
 
-std::vector<PartValues> Evaluator::values_at_conditions(const GridPoint& point) const {
+std::vector<PartValues> Evaluator::values_at_conditions(const GridPoint& point, const Stage& stage) const {
   Population p;
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     if (!space_.has(i)) continue;
     p.printed[i] = space_.at(i, point).value;
+    if (loads_.has_bias_loss()) p.bias_factor[i] = stage.parts[i] / space_.at(i, point).working_value;
     p.cold_loss[i] = space_.at(i, point).family->cold_loss;
   }
   std::vector<PartValues> list;
@@ -158,7 +161,7 @@ FirstOrderSpread Evaluator::spread(const GridPoint& point, const OperatingPoint&
   for (std::size_t i = 0; i < kRoleCount; ++i) {
     if (!space_.has(i)) continue;
     const OfferedValue& part = space_.at(i, point);
-    const double t = half_width(spec_.assess.causes[i].value_or(part.tolerance));
+    const double t = half_width(spec_.assess.causes[i].value_or(tolerance_at_work(part)));
     const double drift = warmest_ * spec_.assess.temperature_coefficient.value_or(part.family->temperature_coefficient);
     s.widths[i] = square_root(t * t + drift * drift);
   }
@@ -180,7 +183,7 @@ Evaluator::Outlook Evaluator::outlook(const GridPoint& point) {
   o.sensitivity = bandwright::sensitivity(stage, o.analysis, definition_, ResponseModel::exact, all_causes());
   const ConditionShifts shifts =
       condition_shifts(stage, o.analysis, units_.conditions, at_conditions(point, stage, o.analysis.point),
-                       values_at_conditions(point), definition_);
+                       values_at_conditions(point, stage), definition_);
   o.distances = limit_distances(spec_, o.analysis, o.sensitivity, spread(point, o.analysis.point), shifts);
   return o;
 }
@@ -222,9 +225,11 @@ RankKey Evaluator::key(const GridPoint& point) {
     if (!space_.has(i)) continue;
     const OfferedValue& v = space_.at(i, point);
     k.values[i] = v.value;
-    ++k.parts;
+    k.parts += v.connection == Connection::single ? 1 : 2;
     k.series_sum += v.series ? v.series->number : 0;
   }
+  if (space_.has_stock) k.to_buy = to_buy(space_, point);
+  k.cost = unit_cost(space_, point);
   k.distinct_values = distinct_values(k.values);
   return k;
 }

@@ -12,6 +12,7 @@
 #include "analysis/bias_reuse.hpp"
 #include "assessment/estimate.hpp"
 #include "search/design_space.hpp"
+#include "search/part_loads.hpp"
 
 namespace bandwright {
 
@@ -65,20 +66,19 @@ private:
     double sensitivity = kNotComputed;
     double capability = kNotComputed;
   };
-  /// What a set of resistors decides: the operating point, and volts and watts at the highest supply.
+  static Packed pack(const GridPoint& point);
+  /// What the resistors alone decide: the operating point, and that nothing can be overloaded whatever it is.
   struct Prepared {
     NominalBias bias;
-    Stress stress;
+    bool clear = false;
   };
-  static Packed pack(const GridPoint& point);
-  const Prepared& prepared(const GridPoint& point, const Stage& stage, const Circuit<double>& circuit);
+  const Prepared& prepared(const GridPoint& point, const Stage& stage);
   const std::vector<NominalBias>& at_conditions(const GridPoint& point, const Stage& stage,
                                                 const OperatingPoint& nominal);
   void look_ahead(const GridPoint& point, Known& k);
   FirstOrderSpread spread(const GridPoint& point, const OperatingPoint& nominal) const;
-  std::vector<PartValues> values_at_conditions(const GridPoint& point) const;
-  double overload(const GridPoint& point, const Stress& stress) const;
-  Stage stage_at(const GridPoint& point) const;
+  std::vector<PartValues> values_at_conditions(const GridPoint& point, const Stage& stage) const;
+  Stage stage_at(const GridPoint& point);
   Known& known(const GridPoint& point);
 
   const Spec& spec_;
@@ -90,6 +90,7 @@ private:
   CauseWidths fixed_widths_{};  ///< of these causes
   double warmest_ = 0;          ///< K, the largest distance of an ambient from 25 °C
   std::size_t evaluations_ = 0;
+  PartLoads loads_;
   std::unordered_map<std::uint64_t, Prepared> prepared_;  // by the resistors' indices
   std::unordered_map<std::uint64_t, std::vector<NominalBias>> at_conditions_;
   std::unordered_map<Packed, Known, Hash> known_;

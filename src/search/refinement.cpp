@@ -9,9 +9,9 @@ namespace bandwright {
 
 namespace {
 
-constexpr int kSteps[] = {-1, 1, -2, 2};
-constexpr int kLargestKick = 2;   // values a kicked part moves at most
-constexpr int kFewestKicked = 2;  // parts in one kick
+constexpr std::int8_t kNextAtHand = 127;  // to the next value that the stock holds
+constexpr int kLargestKick = 2;           // values a kicked part moves at most
+constexpr int kFewestKicked = 2;          // parts in one kick
 constexpr int kMostKicked = 4;
 // One or two values of one or two parts change the reach of a figure's spread by less than this share.
 constexpr double kSpreadMoves = 0.25;
@@ -28,6 +28,10 @@ std::vector<std::int8_t> free_roles(const DesignSpace& space) {
 }
 
 bool step(const DesignSpace& space, GridPoint& p, int role, int by) {
+  if (by == kNextAtHand || by == -kNextAtHand) {
+    p[role] = static_cast<std::int16_t>(next_at_hand(space, static_cast<std::size_t>(role), p[role], by > 0 ? 1 : -1));
+    return p[role] >= 0;
+  }
   p[role] = static_cast<std::int16_t>(p[role] + by);
   return p[role] >= 0 && p[role] < static_cast<int>(space.offered[role]->size());
 }
@@ -45,9 +49,12 @@ struct Base {
 /// True where a neighbour that meets the spec cannot come before the base, whatever its sensitivities are.
 bool is_hopeless(Evaluator& evaluator, const GridPoint& p, double error, const Base& base) {
   const RankKey& key = base.ranked.key;
-  if (key.capability >= kHighestCapability) return error_class(error) > error_class(key.error);
+  // parts at hand may come first from a capability of 1 on
+  const bool any_will_do = key.to_buy > 0 && key.capability > kProducible;
+  if (key.capability >= kHighestCapability && !any_will_do) return error_class(error) > error_class(key.error);
+  const double least = any_will_do ? kProducible : key.capability;
   return !base.outlook.distances.empty() &&
-         evaluator.capability_near(p, base.outlook) < key.capability - kSpreadMoves * std::fabs(key.capability);
+         evaluator.capability_near(p, base.outlook) < least - kSpreadMoves * std::fabs(least);
 }
 
 /// Sensitivities are computed only where the error alone does not decide.
@@ -76,17 +83,32 @@ GridPoint kicked(const DesignSpace& space, const std::vector<std::int8_t>& roles
 }  // namespace
 
 Neighbourhood::Neighbourhood(const DesignSpace& space) {
+  std::vector<std::int8_t> steps = {-1, 1, -2, 2};
+  if (space.has_stock) steps.insert(steps.end(), {-kNextAtHand, kNextAtHand});
+  add_moves(space, steps);
+}
+
+Neighbourhood Neighbourhood::whole(const DesignSpace& space) {
+  int most = 0;
+  for (std::int8_t role : free_roles(space)) most = std::max(most, static_cast<int>(space.offered[role]->size()) - 1);
+  std::vector<std::int8_t> steps;
+  for (int s = 1; s <= std::min(most, kNextAtHand - 1); ++s)
+    steps.insert(steps.end(), {static_cast<std::int8_t>(-s), static_cast<std::int8_t>(s)});
+  Neighbourhood all;
+  all.add_moves(space, steps);
+  return all;
+}
+
+void Neighbourhood::add_moves(const DesignSpace& space, const std::vector<std::int8_t>& steps) {
   const std::vector<std::int8_t> roles_free = free_roles(space);
   for (std::int8_t a : roles_free) {
-    for (int s : kSteps) moves_.push_back({a, static_cast<std::int8_t>(s), -1, 0});
+    for (std::int8_t s : steps) moves_.push_back({a, s, -1, 0});
   }
   // the plateau that one coarse capacitor makes needs two parts changed at once
   for (std::size_t i = 0; i < roles_free.size(); ++i) {
     for (std::size_t k = i + 1; k < roles_free.size(); ++k) {
-      for (int s : kSteps) {
-        for (int t : kSteps) {
-          moves_.push_back({roles_free[i], static_cast<std::int8_t>(s), roles_free[k], static_cast<std::int8_t>(t)});
-        }
+      for (std::int8_t s : steps) {
+        for (std::int8_t t : steps) moves_.push_back({roles_free[i], s, roles_free[k], t});
       }
     }
   }
@@ -134,6 +156,40 @@ LocalSearch::LocalSearch(const Spec& spec, const DesignSpace& space, RankBy by, 
 
 void LocalSearch::refine(const std::vector<GridPoint>& starts, const std::function<bool()>& stop) {
   for (const GridPoint& start : starts) pool_.add(neighbourhood_.refine(evaluator_, start, by_, stop));
+}
+
+namespace {
+
+/// Advances a point like an odometer, capacitors fastest, so that operating points are reused; false after the last.
+bool advance(const DesignSpace& space, GridPoint& p) {
+  for (std::size_t i = kRoleCount; i-- > 0;) {
+    if (!space.has(i)) continue;
+    if (++p[i] < static_cast<int>(space.offered[i]->size())) return true;
+    p[i] = 0;
+  }
+  return false;
+}
+
+}  // namespace
+
+void LocalSearch::enumerate(const std::function<bool()>& stop) {
+  if (optima().empty()) return;
+  const DesignSpace& space = evaluator_.space();
+  Base best(evaluator_, optima().front(), by_);
+  GridPoint p;
+  for (std::size_t i = 0; i < kRoleCount; ++i) p[i] = space.has(i) ? 0 : -1;
+  std::size_t looked_at = 0;
+  do {
+    if (++looked_at % 64 == 0 && stop && stop()) break;
+    if (improves(evaluator_, p, best, by_)) best = Base(evaluator_, {p, evaluator_.key(p)}, by_);
+  } while (advance(space, p));
+  pool_.add(best.ranked);
+}
+
+void LocalSearch::exchange(const std::function<bool()>& stop) {
+  if (optima().empty()) return;
+  const GridPoint best = optima().front().point;
+  pool_.add(Neighbourhood::whole(evaluator_.space()).refine(evaluator_, best, by_, stop));
 }
 
 void LocalSearch::kick(std::uint64_t seed, std::size_t budget, const std::function<bool()>& stop) {

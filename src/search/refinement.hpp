@@ -23,6 +23,9 @@ class Neighbourhood {
 public:
   explicit Neighbourhood(const DesignSpace& space);
 
+  /// Any other value in one role, and in any two: for small lists, such as a drawer's.
+  static Neighbourhood whole(const DesignSpace& space);
+
   /// Descends from `start` until it comes before all its neighbours, or `stop` says so.
   Ranked refine(Evaluator& evaluator, const GridPoint& start, RankBy by, const std::function<bool()>& stop) const;
 
@@ -34,6 +37,8 @@ private:
     std::int8_t first = 0, first_step = 0;
     std::int8_t second = -1, second_step = 0;
   };
+  Neighbourhood() = default;
+  void add_moves(const DesignSpace& space, const std::vector<std::int8_t>& steps);
   bool apply(const DesignSpace& space, const Move& move, GridPoint& point) const;
 
   std::vector<Move> moves_;
@@ -58,6 +63,12 @@ public:
   LocalSearch(const Spec& spec, const DesignSpace& space, RankBy by, std::size_t kept);
 
   void refine(const std::vector<GridPoint>& starts, const std::function<bool()>& stop);
+
+  /// Every point of the space, for small ones.
+  void enumerate(const std::function<bool()>& stop);
+
+  /// Until no change of one part, nor of any two, to any other value improves the best optimum.
+  void exchange(const std::function<bool()>& stop);
 
   /// Kicks and refines until `budget` analyses are spent since the last call.
   void kick(std::uint64_t seed, std::size_t budget, const std::function<bool()>& stop);

@@ -155,7 +155,8 @@ Relaxed relax(const Spec& spec, const DesignSpace& space, const PartValues& star
   Relaxed r;
   r.values = problem.run(rough, ResponseModel::exact, kExactSteps);
   const Stage stage{r.values, &space.device->parameters, surroundings(spec)};
-  const Analysis a = analyse(stage, gain_definition(spec));
+  Analysis a = analyse(stage, gain_definition(spec));
+  a.figures[index(Figure::cost)] = unit_cost(space, snap(space, r.values));
   r.error = search_error(spec, a, r.values, *stage.device);
   if (r.error < kWorstError) {
     const Sensitivity slopes = sensitivity(stage, a, gain_definition(spec));

@@ -8,8 +8,11 @@
 #include <bandwright/search.hpp>
 #include <memory>
 #include <mutex>
+#include <tuple>
 
 #include "search/centring.hpp"
+#include "search/found.hpp"
+#include "search/pairing.hpp"
 #include "search/refinement.hpp"
 #include "search/relaxation.hpp"
 #include "search/starts.hpp"
@@ -26,6 +29,7 @@ constexpr std::size_t kStartsInSpace = 2;  // refined in one space at least
 constexpr std::size_t kRefinedSpaces = 30;
 constexpr std::size_t kKickedSpaces = 8;     // of the most promising, searched on by kicks
 constexpr std::size_t kKickBudget = 400000;  // analyses, over all of them
+constexpr double kEnumerated = 20000;        // combinations of a space that is looked at whole
 constexpr std::size_t kKeptOptima = 24;      // of one space
 // Where the most producible stages are sought, the most exact ones are where the centring starts.
 constexpr std::size_t kExactBudget = 120000;    // kicks that look for them
@@ -77,6 +81,12 @@ private:
   std::mutex ask_;
 };
 
+/// The part of the progress that a stage of the search makes.
+struct Span {
+  double first, last;
+  double at(double share) const { return first + (last - first) * share; }
+};
+
 /// A relaxed start, or a place that was not reached before the search was stopped.
 struct Seed {
   std::size_t space = 0;
@@ -84,13 +94,13 @@ struct Seed {
   bool reached = false;
 };
 
-std::vector<Seed> relax_all(const Spec& spec, const DesignSpaces& all, const SearchOptions& options,
+std::vector<Seed> relax_all(const Spec& spec, const DesignSpaces& all, const SearchOptions& options, Span span,
                             std::atomic<bool>& stop) {
   const std::size_t starts =
       std::clamp(kRelaxations / std::max<std::size_t>(all.spaces.size(), 1), kLeastStarts, kMostStarts);
   const std::vector<Choices> choices = sobol_choices(starts, spec.seed);
   std::vector<Seed> seeds(all.spaces.size() * starts);
-  Workers workers(options, 0.0, 0.2, seeds.size(), stop);
+  Workers workers(options, span.first, span.last, seeds.size(), stop);
   workers.run([&](std::size_t i) {
     Seed& s = seeds[i];
     s.space = i / starts;
@@ -110,10 +120,12 @@ struct Task {
 };
 
 std::vector<Task> plan(std::vector<Seed> seeds, const DesignSpaces& all, RankBy by) {
-  std::stable_sort(seeds.begin(), seeds.end(), [by](const Seed& a, const Seed& b) {
-    const int ea = leading_class(a.relaxed.error, by), eb = leading_class(b.relaxed.error, by);
-    return ea != eb ? ea < eb : a.relaxed.tolerance_sensitivity < b.relaxed.tolerance_sensitivity;
-  });
+  const auto order = [&](const Seed& s) {
+    const DesignSpace& space = all.spaces[s.space];
+    return std::tuple(leading_class(s.relaxed.error, by), space.has_stock && !space.device_in_stock,
+                      s.relaxed.tolerance_sensitivity);
+  };
+  std::stable_sort(seeds.begin(), seeds.end(), [&](const Seed& a, const Seed& b) { return order(a) < order(b); });
   const std::size_t most = std::max(kStartsInSpace, kRefinements / std::max<std::size_t>(all.spaces.size(), 1));
   std::vector<Task> tasks;
   for (const Seed& s : seeds) {
@@ -136,12 +148,6 @@ void sort_by_best(LocalSearches& searches, RankBy by) {
   });
 }
 
-/// The part of the progress that a stage of the search makes.
-struct Span {
-  double first, last;
-  double at(double share) const { return first + (last - first) * share; }
-};
-
 /// Kicks, spent on the spaces that came out best.
 void kick_best(const Spec& spec, LocalSearches& searches, std::size_t budget, const SearchOptions& options, Span span,
                std::atomic<bool>& stop) {
@@ -149,6 +155,13 @@ void kick_best(const Spec& spec, LocalSearches& searches, std::size_t budget, co
   Workers kickers(options, span.first, span.last, chosen, stop);
   kickers.run(
       [&](std::size_t i) { searches[i]->kick(spec.seed + i, budget / chosen, [&] { return kickers.stopped(); }); });
+}
+
+/// A small space is known whole.
+void enumerate_small(LocalSearches& searches, const std::atomic<bool>& stop) {
+  for (const auto& s : searches) {
+    if (combinations(s->evaluator().space()) <= kEnumerated) s->enumerate([&] { return stop.load(); });
+  }
 }
 
 /// Refines the starts of every task, then kicks.
@@ -167,6 +180,7 @@ LocalSearches search_spaces(const Spec& spec, const DesignSpaces& all, const std
   }
   sort_by_best(searches, by);
   kick_best(spec, searches, budget, options, {span.at(0.25), span.last}, stop);
+  enumerate_small(searches, stop);
   sort_by_best(searches, by);
   return searches;
 }
@@ -194,24 +208,8 @@ LocalSearches centre_spaces(const Spec& spec, const LocalSearches& exact, const 
   }
   sort_by_best(searches, by);
   kick_best(spec, searches, kCentredBudget, options, {span.at(0.5), span.last}, stop);
+  enumerate_small(searches, stop);
   return searches;
-}
-
-Found found_from(Evaluator& evaluator, const Ranked& r) {
-  const DesignSpace& space = evaluator.space();
-  const Analysis a = evaluator.analysis(r.point);
-  Found f;
-  f.device = space.device_index;
-  f.variant = space.variant;
-  f.parts = offered_parts(space, r.point);
-  f.allowed = r.key.error <= kWorstError;
-  f.standing.key = r.key;
-  f.standing.device = space.device->parameters.type;
-  f.standing.variant = space.variant->key;
-  f.standing.collector_current = a.point.collector_current;
-  f.standing.input_resistance = a.figures[index(Figure::input_resistance)];
-  for (std::size_t i = kResistorRoles; i < kRoleCount; ++i) f.standing.total_capacitance += r.key.values[i];
-  return f;
 }
 
 /// The one with the smallest error, with its key in the order that is asked for.
@@ -229,43 +227,56 @@ Found most_exact(const Spec& spec, const LocalSearches& searches, RankBy by) {
   return found_from(evaluator, {best->point, evaluator.key(best->point)});
 }
 
-std::string describe_miss(const Found& f, const DesignSpaces& all, const Spec& spec) {
-  for (const DesignSpace& space : all.spaces) {
-    if (space.device_index != f.device || space.variant != f.variant) continue;
-    PartValues v{};
-    for (std::size_t i = 0; i < kRoleCount; ++i) v[i] = f.parts[i].working_value;
-    const Stage stage{v, &space.device->parameters, surroundings(spec)};
-    const Analysis a = analyse(stage, gain_definition(spec));
-    const double drop = a.point.collector_current * v[index(Role::collector)];
-    const auto volts = [](double x) { return format_quantity(x, Dimension::voltage, 3); };
-    return "no combination of the offered values is active with VCE of at least " + volts(kLeastCollectorEmitter) +
-           " and IC RC of at least " + volts(kLeastCollectorDrop) + " within the transistor's limits; the nearest (" +
-           f.standing.device + ") has VCE " + volts(a.point.collector_emitter_voltage) + ", IC RC " + volts(drop) +
-           ", IC " + format_quantity(a.point.collector_current, Dimension::current, 3);
+/// All that the search finds in a set of spaces.
+std::vector<Found> searched(const Spec& spec, const DesignSpaces& all, const SearchOptions& options, Span span,
+                            std::atomic<bool>& stop) {
+  const bool centring = wants_capability(options.rank_by);
+  const RankBy first_by = centring ? RankBy::error : options.rank_by;
+  const std::vector<Task> tasks = plan(relax_all(spec, all, options, {span.first, span.at(0.2)}, stop), all, first_by);
+  LocalSearches searches = search_spaces(spec, all, tasks, first_by, centring ? kExactBudget : kKickBudget, options,
+                                         {span.at(0.2), span.at(centring ? 0.5 : 1.0)}, stop);
+  std::vector<Found> found;
+  if (centring && !searches.empty()) {
+    LocalSearches centred_searches = centre_spaces(spec, searches, options, {span.at(0.5), span.last}, stop);
+    found.push_back(most_exact(spec, searches, options.rank_by));
+    searches = std::move(centred_searches);
   }
-  return "no combination of values is offered";
+  if (spec.parts.stock_only && !searches.empty() && !stop) {
+    sort_by_best(searches, options.rank_by);
+    searches.front()->exchange([&] { return stop.load(); });
+  }
+  for (const auto& s : searches) {
+    for (const Ranked& r : s->optima()) found.push_back(found_from(s->evaluator(), r));
+  }
+  if (!spec.parts.pairs || stop) return found;
+  std::vector<Found> with_pairs = paired(spec, all, found, options.rank_by);
+  found.insert(found.end(), with_pairs.begin(), with_pairs.end());
+  return found;
+}
+
+/// The same with nothing but the stock, its transistors where it holds any.
+std::vector<Found> searched_at_hand(Spec spec, const Catalogue& catalogue, const std::vector<DerivedDevice>& devices,
+                                    const SearchOptions& options, std::atomic<bool>& stop) {
+  spec.parts.stock_only = true;
+  DesignSpaces own = design_spaces(spec, catalogue, devices);
+  const auto in_stock = [](const DesignSpace& s) { return s.device_in_stock; };
+  if (std::any_of(own.spaces.begin(), own.spaces.end(), in_stock))
+    std::erase_if(own.spaces, [&](const DesignSpace& s) { return !in_stock(s); });
+  return own.spaces.empty() ? std::vector<Found>() : searched(spec, own, options, {0.0, 0.5}, stop);
 }
 
 }  // namespace
 
 SearchOutcome search(const Spec& spec, const Catalogue& catalogue, const std::vector<DerivedDevice>& devices,
                      const SearchOptions& options) {
-  const DesignSpaces all = design_spaces(spec, catalogue, devices);
   std::atomic<bool> stop{false};
-  const bool centring = wants_capability(options.rank_by);
-  const RankBy first_by = centring ? RankBy::error : options.rank_by;
-  const std::vector<Task> tasks = plan(relax_all(spec, all, options, stop), all, first_by);
-  LocalSearches searches = search_spaces(spec, all, tasks, first_by, centring ? kExactBudget : kKickBudget, options,
-                                         {0.2, centring ? 0.5 : 1.0}, stop);
+  const DesignSpaces all = design_spaces(spec, catalogue, devices);
   std::vector<Found> found;
-  if (centring && !searches.empty()) {
-    LocalSearches centred_searches = centre_spaces(spec, searches, options, {0.5, 1.0}, stop);
-    found.push_back(most_exact(spec, searches, options.rank_by));
-    searches = std::move(centred_searches);
-  }
-  for (const auto& s : searches) {
-    for (const Ranked& r : s->optima()) found.push_back(found_from(s->evaluator(), r));
-  }
+  // what is at hand is a small world of its own, which is known better when it is searched alone
+  const bool preferred = !catalogue.stock.parts.empty() && !spec.parts.stock_only;
+  if (preferred) found = searched_at_hand(spec, catalogue, devices, options, stop);
+  std::vector<Found> more = searched(spec, all, options, {preferred ? 0.5 : 0.0, 1.0}, stop);
+  found.insert(found.end(), more.begin(), more.end());
 
   SearchOutcome outcome;
   outcome.interrupted = stop;
@@ -275,7 +286,7 @@ SearchOutcome search(const Spec& spec, const Catalogue& catalogue, const std::ve
   if (found.empty() || !found.front().allowed) {
     if (stop) return outcome;
     outcome.nearest_miss =
-        found.empty() ? "no combination of values is offered" : describe_miss(found.front(), all, spec);
+        found.empty() ? "no combination of values is offered" : nearest_miss(found.front(), spec, devices);
     return outcome;
   }
   std::erase_if(found, [](const Found& f) { return !f.allowed; });

@@ -14,7 +14,7 @@ namespace {
 
 std::vector<Field> all_fields() {
   std::vector<Field> rows;
-  for (auto group : {circuit_fields, requirement_fields, part_fields, search_fields, assess_fields, later_fields}) {
+  for (auto group : {circuit_fields, requirement_fields, part_fields, stock_fields, search_fields, assess_fields}) {
     std::vector<Field> more = group();
     std::move(more.begin(), more.end(), std::back_inserter(rows));
   }

@@ -12,6 +12,6 @@ std::vector<Field> requirement_fields();  ///< requirements
 std::vector<Field> part_fields();         ///< parts: rules, ranges, pinned
 std::vector<Field> search_fields();       ///< devices, topologies, search
 std::vector<Field> assess_fields();       ///< assess: units, yield, interval, distribution, causes
-std::vector<Field> later_fields();        ///< keys of the format that this version accepts at their default only
+std::vector<Field> stock_fields();        ///< parts: stock, stock_only, pairs, boards, derating
 
 }  // namespace bandwright

@@ -1,4 +1,4 @@
-// Devices, topologies and the search; and the keys that this version accepts at their default only.
+// Devices, topologies and the search.
 #include <fmt/format.h>
 
 #include "spec/field_groups.hpp"
@@ -61,30 +61,8 @@ Field seed() {
           .show = [](const Spec& spec) { return Json(spec.seed); }};
 }
 
-std::string not_available(const std::string& path, const std::string& usual) {
-  const std::string reason = path + " is not available in this version";
-  return usual.empty() ? "no such key: " + reason : fmt::format("its default {}: {}", usual, reason);
-}
-
-// A key whose default alone is accepted.
-Field later(const std::string& path, Shape shape, const std::string& usual,
-            const std::function<bool(const Reading&)>& is_default) {
-  return {.path = path,
-          .shape = shape,
-          .refuse =
-              [=](const Reading& reading) { return is_default(reading) ? std::string() : not_available(path, usual); },
-          .store = [](Draft&, const Reading&) {}};
-}
-
 }  // namespace
 
 std::vector<Field> search_fields() { return {devices(), topologies(), candidates(), seed()}; }
-
-std::vector<Field> later_fields() {
-  const auto number = [](double value) { return [=](const Reading& reading) { return reading.number == value; }; };
-  return {later("parts.stock", Shape::text, "", [](const Reading&) { return false; }),
-          later("parts.stock_only", Shape::flag, "false", number(0)),
-          later("parts.pairs", Shape::flag, "false", number(0)), later("parts.boards", Shape::count, "1", number(1))};
-}
 
 }  // namespace bandwright

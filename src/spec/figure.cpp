@@ -67,7 +67,7 @@ constexpr std::array<FigureInfo, kFigureCount> kFigures = {{
      "from power-up until the bias stays within 1 %", kOurs},
     {F::supply_rejection, U::reserved, D::decibel, kUsual, false, "supply_rejection", "PSR", "supply rejection",
      "gain over the gain from the supply rail to the output", kOurs},
-    {F::cost, U::reserved, D::money, kUsual, true, "cost", "cost", "cost",
+    {F::cost, U::required, D::money, kUsual, true, "cost", "cost", "cost",
      "sum of the unit costs of all parts of one board", kOurs},
 
     {F::base_voltage, U::reported, D::voltage, kNone, false, "base_voltage", "VB", "base voltage",

@@ -248,6 +248,8 @@ Json command_line_value(const Field& field, const std::string& text) {
   if (field.shape == Shape::names) return comma_separated(text);
   if (field.shape == Shape::range) return pair_of(text);
   if (field.shape == Shape::per_kelvin) return number_or_text(text);
+  if (field.shape == Shape::flag && (text.empty() || text == "true")) return true;
+  if (field.shape == Shape::flag && text == "false") return false;
   return text;
 }
 

@@ -55,6 +55,8 @@ void resolve_parts(Draft& draft, Statements& statements) {
   check_limits(parts.resistors, "parts.resistors", Dimension::resistance, statements);
   check_limits(parts.capacitors, "parts.capacitors", Dimension::capacitance, statements);
   check_variant(parts, statements);
+  if (parts.stock_only && parts.stock.empty())
+    statements.object("parts.stock_only", "it beside parts.stock, the name of a stock file");
 }
 
 }  // namespace bandwright

@@ -90,7 +90,7 @@ std::string help_of(const Field& field) {
 std::vector<OptionKey> all_options() {
   std::vector<OptionKey> out;
   for (const Field& field : fields())
-    if (!field.option.empty()) out.push_back({field.option, field.path, help_of(field)});
+    if (!field.option.empty()) out.push_back({field.option, field.path, help_of(field), field.shape == Shape::flag});
   return out;
 }
 

@@ -2,6 +2,7 @@
 
 #include <fmt/format.h>
 
+#include <algorithm>
 #include <array>
 #include <charconv>
 #include <system_error>
@@ -30,6 +31,9 @@ constexpr std::array<std::pair<std::string_view, std::string_view>, 12> kSpellin
     {"\t", " "},
     {"\xEF\xBC\x85", "%"},  // U+FF05 full-width per cent
 }};
+
+// Printable ASCII has one spelling only.
+bool is_one_spelling(char c) { return c >= ' ' && c <= '~'; }
 
 std::string_view take_digits(std::string_view& rest) {
   std::size_t n = 0;
@@ -71,6 +75,7 @@ std::string_view trimmed(std::string_view text) {
 }
 
 std::string one_spelling(std::string_view text) {
+  if (std::all_of(text.begin(), text.end(), is_one_spelling)) return std::string(trimmed(text));
   std::string out;
   while (!text.empty()) {
     std::size_t taken = 1;

@@ -31,7 +31,7 @@ std::vector<Wrong> wrong_command_lines() {
   return {
       {{}, "no command"},
       {{"desing"}, "did you mean design?"},
-      {{"frobnicate"}, "expected design, check, compare, catalogue or help"},
+      {{"frobnicate"}, "expected design, check, compare, bom, catalogue or help"},
       {{"--gian"}, "unknown option '--gian'"},
       {{"stage.json"}, "bandwright design stage.json"},
       {{"help", "desing"}, "no help on 'desing'"},

@@ -29,14 +29,14 @@ TEST_CASE("the version is that of the library") {
 
 TEST_CASE("help names every command and every exit status") {
   const std::string text = helped({"--help"}).out;
-  for (const char* piece : {"design", "check", "compare", "catalogue", "--version", "130"})
+  for (const char* piece : {"design", "check", "compare", "bom", "catalogue", "--version", "130"})
     CHECK_THAT(text, ContainsSubstring(piece));
   CHECK(helped({"help"}).out == text);
   CHECK(helped({"-h"}).out == text);
 }
 
 TEST_CASE("help of a command is the same on every way to it") {
-  for (const char* command : {"design", "check", "compare", "catalogue"}) {
+  for (const char* command : {"design", "check", "compare", "bom", "catalogue"}) {
     const std::string text = helped({"help", command}).out;
     CHECK_THAT(text, StartsWith(std::string("bandwright ") + command));
     CHECK(helped({command, "--help"}).out == text);
@@ -59,6 +59,10 @@ TEST_CASE("help lists every key of the spec and every option") {
   const std::string compare = helped({"help", "compare"}).out;
   for (const char* option : {"--pick", "--format", "--output", "--quiet"})
     CHECK_THAT(compare, ContainsSubstring(option));
+  const std::string bom = helped({"help", "bom"}).out;
+  for (const char* option : {"--pick", "--quantity", "--attrition", "--no-decoupling", "--no-alternates",
+                             "--consolidate", "--catalogue", "--format", "--output", "--quiet"})
+    CHECK_THAT(bom, ContainsSubstring(option));
   for (const char* option : {"--pick", "--device", "--upper-divider", "--emitter-bypassed", "--shunt"})
     CHECK_THAT(check, ContainsSubstring(option));
 }

@@ -24,9 +24,10 @@ struct HeaderRoom {
   const char* room;
 };
 constexpr std::array kHeaderRooms{
-    HeaderRoom{"fault", "units"},         HeaderRoom{"quantity", "units"}, HeaderRoom{"version", "units"},
-    HeaderRoom{"role", "spec"},           HeaderRoom{"figure", "spec"},    HeaderRoom{"cause", "spec"},
-    HeaderRoom{"population", "analysis"},
+    HeaderRoom{"fault", "units"},         HeaderRoom{"quantity", "units"},  HeaderRoom{"version", "units"},
+    HeaderRoom{"role", "spec"},           HeaderRoom{"figure", "spec"},     HeaderRoom{"cause", "spec"},
+    HeaderRoom{"population", "analysis"}, HeaderRoom{"stock", "catalogue"}, HeaderRoom{"stress", "assessment"},
+    HeaderRoom{"alternates", "design"},   HeaderRoom{"board", "design"},
 };
 
 /// Where headers from outside the language's own library may be included: beginnings of paths, parted by spaces.
@@ -41,10 +42,10 @@ constexpr std::array kHomes{
     Home{"boost/", "src/"},
     Home{"Eigen/", "src/analysis/"},
     Home{"unsupported/Eigen/", "src/analysis/"},
-    Home{"tbb/", "src/search/ src/design. src/finalists."},
-    Home{"oneapi/tbb", "src/search/ src/design. src/finalists."},
-    Home{"execution",
-         "src/search/ src/design. src/finalists."},  // the standard library hands its parallel algorithms to oneTBB
+    Home{"tbb/", "src/search/ src/design. src/finalists. src/alternates"},
+    Home{"oneapi/tbb", "src/search/ src/design. src/finalists. src/alternates"},
+    Home{"execution", "src/search/ src/design. src/finalists. src/alternates"},  // the standard library hands its
+                                                                                 // parallel algorithms to oneTBB
     Home{"fmt/", "src/"},
     Home{"immintrin.h", "src/kernel/"},
     Home{"sys/", "src/cli/"},

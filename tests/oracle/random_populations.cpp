@@ -100,16 +100,39 @@ Spec PopulationSource::pick_spec(const RandomCircuit& c) {
   return spec;
 }
 
-Population PopulationSource::next() {
+RandomDesign PopulationSource::next_design() {
   for (;;) {
     RandomCircuit c = circuits_.next();
     c.stage.around.ambient = kRoom;
-    const Spec spec = pick_spec(c);
-    const BipolarParameters device = pick_limits(c);
-    const OfferedParts parts = pick_offered(dice_, c.stage.parts);
+    RandomDesign d{pick_spec(c), pick_limits(c), pick_offered(dice_, c.stage.parts), {}};
     const bandwright::Analysis nominal = analyse(c.stage, c.definition);
-    if (nominal.point.state == bandwright::BiasState::active) return population_of(spec, device, parts, nominal);
+    if (nominal.point.state != bandwright::BiasState::active) continue;
+    d.population = population_of(d.spec, d.device, d.parts, nominal);
+    return d;
   }
+}
+
+RandomDesign PopulationSource::next_with_dc() {
+  RandomDesign d = next_design();
+  const bandwright::Analysis nominal =
+      analyse(nominal_stage(d.population, d.population.conditions.front()), d.population.definition);
+  const double sign = d.spec.pnp() ? -1 : 1;
+  const auto near = [&](double node) {
+    if (dice_.chance(0.4)) return 0.0;
+    return dice_.chance(0.4) ? sign * node * dice_.between(0.9, 1.1) : d.spec.supply_magnitude() * dice_.between(-1, 1);
+  };
+  d.spec.source.dc = near(nominal.point.base_voltage);
+  d.spec.load.dc = near(nominal.point.emitter_voltage + nominal.point.collector_emitter_voltage);
+  for (bandwright::CauseSpread& spread : d.population.spread) {
+    const double factor = dice_.chance(0.15) ? 0 : dice_.between(0.3, 1.3);
+    spread.below *= factor;
+    spread.above *= factor;
+  }
+  for (OfferedValue& part : d.parts) {
+    if (part.family != nullptr && part.family->polarised)
+      part.unpolarised = bandwright::built_in_catalogue().find_family(part.family->unpolarised);
+  }
+  return d;
 }
 
 }  // namespace oracle

@@ -17,9 +17,9 @@ using bandwright::BiasState;
 using bandwright::Figure;
 using bandwright::index;
 using bandwright::LaneKind;
-using bandwright::Outcome;
 using bandwright::Population;
 using bandwright::UnitBlock;
+using bandwright::UnitOutcome;
 using bandwright::UnitRunner;
 
 namespace {
@@ -60,7 +60,7 @@ struct Run {
 
 void compare_unit(const Run& run, const Analysis& a, std::size_t condition, std::size_t unit, const std::string& where,
                   Findings& f) {
-  const bool active = run.block.outcome(condition, unit) == Outcome::active;
+  const bool active = run.block.outcome(condition, unit) == UnitOutcome::active;
   INFO(where);
   REQUIRE(active == (a.point.state == BiasState::active));
   f.active += active;

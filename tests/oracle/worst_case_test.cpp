@@ -21,10 +21,10 @@ using bandwright::BoxPoint;
 using bandwright::Figure;
 using bandwright::FigureValues;
 using bandwright::index;
-using bandwright::Outcome;
 using bandwright::Population;
 using bandwright::UnitBlock;
 using bandwright::UnitBox;
+using bandwright::UnitOutcome;
 using bandwright::UnitRunner;
 using bandwright::WorstCase;
 
@@ -62,7 +62,7 @@ double largest_excess(const UnitBlock& block, std::size_t conditions, std::size_
   double low = w.max, high = w.min;
   for (std::size_t c = 0; c < conditions; ++c) {
     for (std::size_t unit = 0; unit < block.units; ++unit) {
-      if (block.outcome(c, unit) != Outcome::active) continue;
+      if (block.outcome(c, unit) != UnitOutcome::active) continue;
       const double y = block.value(c, figure, unit);
       if (std::isnan(y)) return y;
       low = std::min(low, y), high = std::max(high, y);
@@ -73,7 +73,7 @@ double largest_excess(const UnitBlock& block, std::size_t conditions, std::size_
 
 void count_active(const UnitBlock& block, std::size_t conditions, Findings& f) {
   for (std::size_t c = 0; c < conditions; ++c)
-    for (std::size_t unit = 0; unit < block.units; ++unit) f.active += block.outcome(c, unit) == Outcome::active;
+    for (std::size_t unit = 0; unit < block.units; ++unit) f.active += block.outcome(c, unit) == UnitOutcome::active;
 }
 
 /// A reason without its numbers.

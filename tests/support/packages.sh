@@ -3,7 +3,7 @@
 
 packages_to_build=(g++ cmake ninja-build libnlopt-cxx-dev libboost-program-options-dev nlohmann-json3-dev
   libeigen3-dev libfmt-dev libtbb-dev)
-packages_to_test=(catch2)
+packages_to_test=(catch2 python3)
 packages_to_format=(git clang-format-14)
 
 say() { printf '%s\n' "$*" >&2; }

@@ -13,7 +13,7 @@ SampleDesign sample_design(const std::string& requirements, const std::string& m
   const PartValues values = {82e3, 22e3, 3.9e3, 62, 1.2e3, 4.7e-6, 1e-6, 100e-6, 2.7e-9};
   PartValues working{};
   for (const RoleInfo& r : roles()) {
-    s.parts[index(r.role)] = resolve_value(built_in_catalogue(), s.spec, r.role, values[index(r.role)]);
+    s.parts[index(r.role)] = resolve_value(built_in_catalogue(), s.spec, r.role, {values[index(r.role)]});
     working[index(r.role)] = s.parts[index(r.role)].working_value;
   }
   s.nominal = analyse({working, &s.device, surroundings(s.spec)}, gain_definition(s.spec));

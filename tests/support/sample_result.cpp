@@ -12,6 +12,8 @@ constexpr double kThird = 1.0 / 3;  // needs all its digits
 
 Part part(Role role, double value, const char* code, const char* family) {
   Part made;
+  made.designator = info(role).designator;
+  made.kind = info(role).kind;
   made.role = role;
   made.value = value;
   made.code = code;
@@ -21,6 +23,8 @@ Part part(Role role, double value, const char* code, const char* family) {
   made.nodes = nodes(role);
   made.voltage_rating = 63;
   made.volts = 5.5;
+  made.unit_cost = 0.02;
+  made.invented_cost = true;
   if (info(role).kind == PartKind::resistor) {
     made.power_rating = 0.25;
     made.watts = 0.0123;
@@ -85,6 +89,14 @@ void fill_pole_model(Candidate& c) {
 
 void fill_device(Candidate& c) {
   c.device = "BC547B";
+  c.transistor.designator = "Q1";
+  c.transistor.kind = PartKind::transistor;
+  c.transistor.code = "BC547B";
+  c.transistor.family = "NPN transistor";
+  c.transistor.voltage_rating = 45;
+  c.transistor.power_rating = 0.5;
+  c.transistor.unit_cost = 0.08;
+  c.transistor.invented_cost = true;
   c.parameters.type = "BC547B";
   c.parameters.log_saturation_current = -32.1;
   c.parameters.inverse_early_voltage = 1 / 74.0;

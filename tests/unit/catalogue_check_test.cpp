@@ -45,13 +45,18 @@ TEST_CASE("devices: unknown names and the wrong polarity") {
   CHECK_THAT(faults[0].expected, ContainsSubstring("PNP"));
 }
 
-TEST_CASE("X7R is refused by name") {
+TEST_CASE("X7R alone is refused where the cutoff it would set must be better than 40 %") {
   Spec spec = spec_at(12);
-  spec.parts.capacitors.families = {"film", "X7R"};
+  spec.parts.capacitors.families = {"X7R"};
+  CHECK(faults_of(spec).empty());
+  spec.requirements[index(Figure::lower_cutoff)] = Requirement{40, 40 / 1.2, 40 * 1.2};
   const auto faults = faults_of(spec);
-  REQUIRE(faults.size() == 1);
-  CHECK(faults[0].where == "parts.capacitors.families[1]");
-  CHECK_THAT(describe(faults[0]), ContainsSubstring("X7R is not offered until its loss under DC bias is counted"));
+  REQUIRE(faults.size() == 2);  // input and output coupling; bypass may be absent
+  CHECK(faults[0].where == "parts.capacitors");
+  CHECK_THAT(describe(faults[0]), ContainsSubstring("input_coupling") &&
+                                      ContainsSubstring("class 2 ceramic is refused") && ContainsSubstring("40 %"));
+  spec.parts.capacitors.families = {"film", "X7R"};
+  CHECK(faults_of(spec).empty());
 }
 
 TEST_CASE("families: unknown, and of the other kind") {
@@ -103,6 +108,6 @@ TEST_CASE("faults of several kinds are told together") {
   Spec spec = spec_at(12);
   spec.devices = {"BC999"};
   spec.parts.resistors.series = "E25";
-  spec.parts.capacitors.families = {"x7r"};
+  spec.parts.capacitors.families = {"x8r"};
   CHECK(faults_of(spec).size() == 3);
 }

@@ -84,16 +84,16 @@ void check_figure(const std::string& key, const json& figure) {
 
 }  // namespace
 
-TEST_CASE("the built-in catalogue holds the fifteen types and the six families") {
+TEST_CASE("the built-in catalogue holds the fifteen types and the seven families") {
   const Catalogue& catalogue = built_in_catalogue();
   std::set<std::string> types;
   for (const Transistor& t : catalogue.transistors) types.insert(t.type);
   CHECK(types == kTypes);
-  for (const char* key : {"metal-film", "thick-film", "c0g", "film", "electrolytic", "x7r"}) {
+  for (const char* key : {"metal-film", "thick-film", "c0g", "film", "electrolytic", "bipolar-electrolytic", "x7r"}) {
     INFO(key);
     CHECK(catalogue.find_family(key) != nullptr);
   }
-  CHECK(catalogue.families.size() == 6);
+  CHECK(catalogue.families.size() == 7);
   CHECK(catalogue.find_transistor("2N3906")->pnp);
   CHECK_FALSE(catalogue.find_transistor("BC547B")->pnp);
   CHECK(catalogue.find_transistor("bc547b") == catalogue.find_transistor("BC547B"));

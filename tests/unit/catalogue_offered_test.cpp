@@ -79,7 +79,7 @@ TEST_CASE("capacitors by default: C0G to 10 nF, film to 1 uF, electrolytic to 10
   CHECK(at(list, 100e-12)->tolerance == Tolerance{0.05, 0.05});
   CHECK(at(list, 100e-9)->tolerance == Tolerance{0.1, 0.1});
   CHECK(at(list, 100e-6)->tolerance == Tolerance{0.2, 0.2});
-  for (const OfferedValue& o : list) CHECK(o.family->key != "x7r");
+  for (const OfferedValue& o : list) CHECK((o.family->key != "x7r" && o.family->key != "bipolar-electrolytic"));
 }
 
 TEST_CASE("a series in the spec limits every family") {
@@ -163,8 +163,54 @@ TEST_CASE("named families serve in the order they are named, as far as they are 
   CHECK(at(both, 0.068e-6)->family->key == "film");
   spec.parts.resistors.families = {"thick-film"};
   CHECK(offered(spec, Role::collector).front().family->key == "thick-film");
+  spec.parts.capacitors.families = {"bipolar-electrolytic"};
+  const auto bipolar = offered(spec, Role::input_coupling);
+  CHECK(bipolar.front().value == Approx(0.47e-6).epsilon(1e-12));
+  CHECK(bipolar.back().value == Approx(2.2e-3).epsilon(1e-12));
+}
+
+TEST_CASE("a class 2 ceramic serves where it is named, unless the cutoff it sets must be better than 40 %") {
+  Spec spec = plain_spec();
   spec.parts.capacitors.families = {"x7r"};
-  CHECK(offered(spec, Role::input_coupling).empty());
+  const auto all = offered(spec, Role::input_coupling);
+  CHECK(all.size() == 5 * 6 + 5);  // E6 from 100 pF to 47 uF
+  CHECK(all.back().tolerance == Tolerance{0.1, 0.1});
+  const auto lower = [&](double low, double high) {
+    spec.requirements[index(Figure::lower_cutoff)] = Requirement{40, low, high};
+  };
+  lower(40 / 1.2, 40 * 1.2);  // the usual 20 %
+  for (const Role role : {Role::input_coupling, Role::output_coupling, Role::bypass})
+    CHECK(offered(spec, role).empty());
+  CHECK(offered(spec, Role::shunt).size() == all.size());
+  lower(40 / 1.399, 40 * 1.399);
+  CHECK(offered(spec, Role::bypass).empty());
+  lower(40 / 1.401, 40 * 1.401);
+  CHECK(offered(spec, Role::bypass).size() == all.size());
+  lower(kNotComputed, 50);  // met with capacitance to spare
+  CHECK(offered(spec, Role::bypass).size() == all.size());
+  spec.requirements[index(Figure::upper_cutoff)] = Requirement{20e3, 18e3, 22e3};
+  CHECK(offered(spec, Role::shunt).empty());
+  spec.parts.capacitors.families = {"x7r", "c0g"};
+  for (const OfferedValue& o : offered(spec, Role::shunt)) CHECK(o.family->key == "c0g");
+}
+
+TEST_CASE("a class 2 ceramic at work: what temperature, ageing and DC voltage take of it") {
+  Spec spec = plain_spec();
+  spec.parts.capacitors.families = {"x7r"};
+  const OfferedValue o = resolve_value(built_in_catalogue(), spec, Role::bypass, {1e-6});
+  REQUIRE(o.family->key == "x7r");
+  // 10 % printed, 15 % over temperature, 10 % of ageing: 1 - 0.9 x 0.85 x 0.9 = 0.3115; 1.1 x 1.15 - 1 = 0.265
+  CHECK(tolerance_at_work(o).below == Approx(0.3115).epsilon(1e-12));
+  CHECK(tolerance_at_work(o).above == Approx(0.265).epsilon(1e-12));
+  // 9 V at worst needs 15 V, so 16 V: 1 - 0.5 x 8/16
+  CHECK(bias_factor(o, {}, 8, 9) == Approx(0.75).epsilon(1e-12));
+  CHECK(bias_factor(o, {}, -8, -9) == Approx(0.75).epsilon(1e-12));
+  CHECK(bias_factor(o, {}, 8, 10) == Approx(0.84).epsilon(1e-12));  // 16.7 V, so 25 V
+  CHECK(bias_factor(o, {}, 0, 10) == 1);
+  CHECK(bias_factor(o, {}, 300, 300) == 0.5);  // no rating holds: all of the loss
+  const OfferedValue film = resolve_value(built_in_catalogue(), plain_spec(), Role::bypass, {1e-6});
+  CHECK(bias_factor(film, {}, 8, 9) == 1);
+  CHECK(tolerance_at_work(film) == film.tolerance);
 }
 
 TEST_CASE("a pinned value is the only one, in a series or not") {
@@ -189,7 +235,9 @@ TEST_CASE("a pinned value is the only one, in a series or not") {
 
 TEST_CASE("a value is resolved with the family that is first choice there, or the nearest") {
   const Spec spec = plain_spec();
-  const auto resolve = [&](Role role, double value) { return resolve_value(built_in_catalogue(), spec, role, value); };
+  const auto resolve = [&](Role role, double value) {
+    return resolve_value(built_in_catalogue(), spec, role, {value});
+  };
   CHECK(resolve(Role::bypass, 82e-6).family->key == "electrolytic");
   CHECK(resolve(Role::bypass, 0.12e-6).family->key == "film");
   CHECK(resolve(Role::bypass, 0.12e-6).series->name == "E12");
@@ -202,7 +250,7 @@ TEST_CASE("a value is resolved with the family that is first choice there, or th
 TEST_CASE("a part whose family is not sold so tight is taken at its tightest") {
   Spec spec = plain_spec();
   spec.parts.capacitors.tolerance = Tolerance{0.001, 0.001};
-  const OfferedValue o = resolve_value(built_in_catalogue(), spec, Role::bypass, 100e-6);
+  const OfferedValue o = resolve_value(built_in_catalogue(), spec, Role::bypass, {100e-6});
   CHECK(o.family->key == "electrolytic");
   CHECK(o.tolerance == Tolerance{0.2, 0.2});
 }
@@ -210,14 +258,14 @@ TEST_CASE("a part whose family is not sold so tight is taken at its tightest") {
 TEST_CASE("an electrolytic loses 0.5 % for each kelvin below 20 °C, from memory") {
   Spec spec = plain_spec();
   spec.ambient = {263.15, 263.15, 263.15};  // -10 °C
-  const OfferedValue cold = resolve_value(built_in_catalogue(), spec, Role::bypass, 100e-6);
+  const OfferedValue cold = resolve_value(built_in_catalogue(), spec, Role::bypass, {100e-6});
   CHECK(cold.value == 100e-6);
   CHECK(cold.working_value == Approx(85e-6).epsilon(1e-12));
-  CHECK(resolve_value(built_in_catalogue(), spec, Role::bypass, 100e-9).working_value == 100e-9);
+  CHECK(resolve_value(built_in_catalogue(), spec, Role::bypass, {100e-9}).working_value == 100e-9);
   spec.ambient.nominal = 293.15;
-  CHECK(resolve_value(built_in_catalogue(), spec, Role::bypass, 100e-6).working_value == 100e-6);
+  CHECK(resolve_value(built_in_catalogue(), spec, Role::bypass, {100e-6}).working_value == 100e-6);
   spec.ambient.nominal = 333.15;
-  CHECK(resolve_value(built_in_catalogue(), spec, Role::bypass, 100e-6).working_value == 100e-6);
+  CHECK(resolve_value(built_in_catalogue(), spec, Role::bypass, {100e-6}).working_value == 100e-6);
   spec.ambient.nominal = 218.15;  // -55 °C: 1.5 uF works as 0.94 uF, below the 1 uF film capacitor
   const auto list = offered(spec, Role::bypass);
   CHECK(std::is_sorted(list.begin(), list.end(),

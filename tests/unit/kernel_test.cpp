@@ -88,7 +88,7 @@ TEST_CASE("units in lanes agree with units one by one", "[kernel]") {
   for (std::size_t unit = 0; unit < 200; ++unit) {
     for (std::size_t c = 0; c < p.conditions.size(); ++c) {
       const Analysis a = runner.analyse(1, unit, c);
-      REQUIRE((a.point.state == BiasState::active) == (block.outcome(c, unit) == Outcome::active));
+      REQUIRE((a.point.state == BiasState::active) == (block.outcome(c, unit) == UnitOutcome::active));
       for (std::size_t f = 0; f < kMore.size(); ++f) {
         CHECK(block.value(c, f, unit) == Approx(a.figures[index(kMore[f])]).epsilon(1e-11));
       }
@@ -111,7 +111,7 @@ TEST_CASE("what the nominal unit cannot start is solved one by one", "[kernel]")
     const UnitBlock block = block_of(p, kBand, kind, 0, 64);
     alone = block.solved_alone;
     inactive = 0;
-    for (Outcome o : block.outcomes) inactive += o == Outcome::not_active;
+    for (UnitOutcome o : block.outcomes) inactive += o == UnitOutcome::not_active;
   }
   CHECK(alone > 0);
   CHECK(inactive > 0);

@@ -36,7 +36,9 @@ void collect_nulls(const Json& value, const std::string& path, std::vector<std::
 
 // Fields that do not apply to a part are null without a reason, as the format shows.
 bool needs_no_reason(const std::string& path) {
-  return path.ends_with("/polarity") || (path.starts_with("/parts/") && path.ends_with("/power_rating"));
+  for (const char* key : {"/polarity", "/in_stock", "/temperature_coefficient"})
+    if (path.ends_with(key)) return true;
+  return path.starts_with("/parts/") && path.ends_with("/power_rating");
 }
 
 // A note stands under the figure's name, or under the path of what holds it.
@@ -107,8 +109,12 @@ TEST_CASE("a candidate holds every field of its format") {
               "feedback_capacitance_at_zero_bias", "collector_built_in_potential", "collector_grading_exponent",
               "saturation_current_temperature_exponent", "current_gain_temperature_exponent", "bandgap_voltage",
               "collector_cutoff_current", "saturation_voltage", "thermal_resistance"});
-  check_keys(one["parts"][0], {"designator", "role", "kind", "value", "value_code", "series", "tolerance", "family",
-                               "power_rating", "voltage_rating", "polarity", "nodes", "part_number"});
+  check_keys(one["parts"][0],
+             {"designator", "role", "kind", "value", "value_code", "series", "tolerance", "family", "power_rating",
+              "voltage_rating", "polarity", "nodes", "part_number", "temperature_coefficient", "unit_cost",
+              "cost_invented", "from_stock", "in_stock", "note"});
+  check_keys(one["transistor"], {"designator", "kind", "type", "family", "power_rating", "voltage_rating",
+                                 "part_number", "unit_cost", "cost_invented", "from_stock", "in_stock", "note"});
   check_keys(one["figures"], {"gain",
                               "lower_cutoff",
                               "upper_cutoff",
@@ -143,6 +149,11 @@ TEST_CASE("values stand under their names in SI") {
   CHECK(one["parts"][6]["tolerance"] == Json({-0.2, 0.5}));
   CHECK(one["parts"][6]["polarity"] == "+ to collector");
   CHECK(one["parts"][0]["nodes"] == Json({"supply", "base"}));
+  CHECK(one["parts"][0]["unit_cost"] == 0.02);
+  CHECK(one["parts"][0]["cost_invented"] == true);
+  CHECK(one["parts"][0]["in_stock"].is_null());
+  CHECK(one["transistor"]["type"] == "BC547B");
+  CHECK(one["transistor"]["unit_cost"] == 0.08);
   CHECK(one["figures"]["junction_temperature_degc"].get<double>() == Approx(300 - 273.15));
   CHECK(one["poles"][1]["real"] == -20e3);
   CHECK(one["poles"][1]["imaginary"] == 1e3);
@@ -175,6 +186,7 @@ TEST_CASE("every null has its reason in the notes") {
   c.tolerance_sensitivity = kNotComputed;
   c.parameters.inverse_early_voltage = 0;
   c.parts[0].series = "";
+  c.parts[0].unit_cost = c.transistor.unit_cost = kNotComputed;
   c.parts[6].voltage_rating = kNotComputed;
   c.poles_estimate.upper_cutoff = std::numeric_limits<double>::infinity();
   c.poles_estimate.low[0].resistance = std::numeric_limits<double>::infinity();

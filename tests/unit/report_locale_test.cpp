@@ -3,6 +3,7 @@
 #include <locale>
 
 #include "catch.hpp"
+#include "sample_bill.hpp"
 #include "sample_result.hpp"
 
 using namespace bandwright;
@@ -29,7 +30,9 @@ private:
 
 std::string all_writers() {
   const DesignResult result = test::sample_result();
-  return write_table(result) + write_json(result) + write_csv(result) + write_catalogue(built_in_catalogue()) +
+  const Bill bill = test::sample_bill();
+  return write_bill_table({bill, std::nullopt}) + write_bill_json({bill, std::nullopt}) + write_bill_csv(bill) +
+         write_table(result) + write_json(result) + write_csv(result) + write_catalogue(built_in_catalogue()) +
          write_transistor(built_in_catalogue(), built_in_catalogue().transistors.front()) +
          write_series(*find_series("E24"));
 }

@@ -1,0 +1,15 @@
+// Pairs of parts in one role, where no single value meets the spec.
+#pragma once
+
+#include <bandwright/search.hpp>
+#include <vector>
+
+#include "search/design_space.hpp"
+
+namespace bandwright {
+
+/// From the best stages found, none of which meets the spec: the same with one part after another made a pair, each
+/// time the pair that helps most, until the spec is met or no pair helps. Empty where a stage meets the spec already.
+std::vector<Found> paired(const Spec& spec, const DesignSpaces& all, const std::vector<Found>& found, RankBy by);
+
+}  // namespace bandwright
