@@ -46,13 +46,6 @@ std::vector<std::string> general_assumptions(const Spec& spec) {
           ", within the transistor's limits, each part with a rating that holds",
       "ratings: the worst corner of tolerances, hFE, VBE, VA, ICBO, supply and ambient; derated from memory of "
       "ECSS-Q-ST-30-11C, which was not read"};
-  if (!spec.parts.stock.empty())
-    list.push_back(
-        spec.parts.stock_only
-            ? "parts come from the stock " + spec.parts.stock + " alone"
-            : "parts at hand in the stock " + spec.parts.stock +
-                  " come before bought ones among stages of the same error class, or that meet the spec with "
-                  "a capability of at least 1");
   if (spec.ambient.nominal < kColdBegins)
     list.push_back("electrolytics lose 0.5 % for each kelvin below 20 °C (from memory)");
   return list;
@@ -102,12 +95,13 @@ void add_notes(const Spec& spec, const Stage& stage, const GainDefinition& defin
 
 }  // namespace
 
-DesignResult empty_result(const Spec& spec, RankBy by) {
+DesignResult empty_result(const Spec& spec, const Catalogue& catalogue, RankBy by) {
   DesignResult r;
   r.spec = spec;
   r.ranked_by = by;
   r.definitions = definitions_in_force(spec);
   r.assumptions = general_assumptions(spec);
+  for (std::string& text : stock_and_family_assumptions(spec, catalogue)) r.assumptions.push_back(std::move(text));
   return r;
 }
 

@@ -6,7 +6,7 @@
 namespace bandwright {
 
 /// A result with spec, definitions and assumptions, no candidates yet.
-DesignResult empty_result(const Spec& spec, RankBy by);
+DesignResult empty_result(const Spec& spec, const Catalogue& catalogue, RankBy by);
 
 /// The transistors that a spec names, or every one of the right polarity.
 std::vector<const Transistor*> fitting_transistors(const Spec& spec, const Catalogue& catalogue);

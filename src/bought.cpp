@@ -3,6 +3,8 @@
 #include <bandwright/stress.hpp>
 #include <cmath>
 
+#include "catalogue/offer.hpp"
+
 namespace bandwright {
 
 namespace {
@@ -46,7 +48,46 @@ void add_cost_notes(Candidate& c) {
   if (unknown.empty() && !invented.empty()) c.notes["cost"] = "rests on costs invented for demonstration: " + invented;
 }
 
+/// What a class 2 ceramic works at.
+void add_bias_notes(Candidate& c) {
+  for (Part& part : c.parts) {
+    const double left = c.offered[index(part.role)].bias_factor;
+    if (part.kind != PartKind::capacitor || left == 1) continue;
+    part.note += (part.note.empty() ? "" : "; ") + format_quantity(100 * left, Dimension::fraction, 3) +
+                 " % left of it at its DC voltage, assumed";
+  }
+}
+
+/// Roles that a family of the spec may not take.
+std::string refused_roles(const Spec& spec, const Family& family) {
+  std::string roles_text;
+  for (const RoleInfo& r : roles())
+    if (r.kind == family.kind && is_too_loose(family, spec, r.role))
+      roles_text += (roles_text.empty() ? "" : ", ") + std::string(r.designator);
+  return roles_text;
+}
+
 }  // namespace
+
+std::vector<std::string> stock_and_family_assumptions(const Spec& spec, const Catalogue& catalogue) {
+  std::vector<std::string> list;
+  if (spec.parts.stock_only) list.push_back("parts come from the stock " + spec.parts.stock + " alone");
+  if (!spec.parts.stock.empty() && !spec.parts.stock_only)
+    list.push_back("parts at hand in the stock " + spec.parts.stock +
+                   " come before bought ones among stages of the same error class, or that meet the spec with a "
+                   "capability of at least 1");
+  for (const std::string& key : spec.parts.capacitors.families) {
+    const Family* family = catalogue.find_family(key);
+    if (family == nullptr || family->bias_loss == 0) continue;
+    list.push_back(family->name + ": C (1 - " + format_quantity(family->bias_loss, Dimension::fraction) +
+                   " V/Vrated) at its DC voltage V at the nominal supply, assumed; temperature and ageing join its "
+                   "tolerance");
+    if (const std::string refused = refused_roles(spec, *family); !refused.empty())
+      list.push_back(family->name + " is not offered as " + refused +
+                     ": the cutoff that it sets must be better than ±40 %");
+  }
+  return list;
+}
 
 double cost_of(const Candidate& c) {
   double cost = c.transistor.unit_cost;
@@ -63,6 +104,7 @@ void buy(const Spec& spec, const Catalogue& catalogue, const OfferedParts& chose
   c.transistor = transistor_part(catalogue, c.device, c.stress);
   c.stress_table = stress_table(spec, c.parts, c.parameters, c.stress);
   if (!reason.empty()) c.notes["parts"] = reason;
+  add_bias_notes(c);
   add_cost_notes(c);
 }
 

@@ -9,6 +9,9 @@ namespace bandwright {
 /// `c.device` and `c.parameters` are set.
 void buy(const Spec& spec, const Catalogue& catalogue, const OfferedParts& chosen, Candidate& c);
 
+/// What a result says of the stock and of class 2 ceramics.
+std::vector<std::string> stock_and_family_assumptions(const Spec& spec, const Catalogue& catalogue);
+
 /// Sum over all parts of one board; NaN where the cost of one is not known.
 double cost_of(const Candidate& c);
 

@@ -15,7 +15,7 @@ namespace bandwright {
 
 DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOptions& options) {
   if (auto faults = check_against_catalogue(spec, catalogue); !faults.empty()) throw InputError(std::move(faults));
-  DesignResult result = empty_result(spec, options.rank_by);
+  DesignResult result = empty_result(spec, catalogue, options.rank_by);
 
   std::vector<DerivedDevice> devices;
   for (const Transistor* t : fitting_transistors(spec, catalogue)) devices.push_back(derive_parameters(*t));
@@ -60,7 +60,7 @@ DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::stri
   OfferedParts parts;
   for (const RoleInfo& r : roles())
     parts[index(r.role)] = resolve_value(catalogue, spec, r.role, choices[index(r.role)]);
-  DesignResult result = empty_result(spec, options.rank_by);
+  DesignResult result = empty_result(spec, catalogue, options.rank_by);
   result.searched = false;
   std::vector<Candidate> one = {assemble(spec, devices.front(), catalogue, parts)};
   assess_all(spec, options, one);

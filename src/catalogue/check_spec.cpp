@@ -155,8 +155,10 @@ std::vector<Fault> check_against_catalogue(const Spec& spec, const Catalogue& ca
   check_rules(spec.parts.resistors, PartKind::resistor, catalogue, faults);
   check_rules(spec.parts.capacitors, PartKind::capacitor, catalogue, faults);
   // An unknown family or series would show again at every role.
+  const bool rules_hold = faults.size() == before;
+  const bool stock_is_read = spec.parts.stock.empty() || !catalogue.stock.name.empty();
   check_stock(spec, catalogue, faults);
-  if (faults.size() == before) check_roles(spec, catalogue, faults);
+  if (rules_hold && stock_is_read) check_roles(spec, catalogue, faults);
   return faults;
 }
 

@@ -32,7 +32,8 @@ std::string why_not_assessed(const Candidate& candidate) {
 std::vector<Figure> required_figures(const Spec& spec, bool band) {
   std::vector<Figure> list;
   for (const FigureInfo& figure : figures())
-    if (spec.requirement(figure.figure) || (band && is_band(figure.figure))) list.push_back(figure.figure);
+    if (varies(figure.figure) && (spec.requirement(figure.figure) || (band && is_band(figure.figure))))
+      list.push_back(figure.figure);
   return list;
 }
 
@@ -40,7 +41,8 @@ std::vector<Figure> bounded_figures(const Assessment& assessment, const Spec& sp
   std::vector<Figure> list = required_figures(spec, true);
   for (const FigureInfo& figure : figures()) {
     const bool listed = std::find(list.begin(), list.end(), figure.figure) != list.end();
-    if (!listed && has_worst_case(assessment.worst_case[index(figure.figure)])) list.push_back(figure.figure);
+    if (!listed && varies(figure.figure) && has_worst_case(assessment.worst_case[index(figure.figure)]))
+      list.push_back(figure.figure);
   }
   return list;
 }

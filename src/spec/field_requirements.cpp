@@ -18,6 +18,7 @@ constexpr std::array kAsked = {
     Asked{Dimension::gain, {1e-3, 1e6}},        Asked{Dimension::frequency, {1e-3, 1e11}},
     Asked{Dimension::resistance, {1e-3, 1e10}}, Asked{Dimension::voltage, {1e-9, 1e3}},
     Asked{Dimension::current, {1e-12, 100}},    Asked{Dimension::power, {1e-12, 1e3}},
+    Asked{Dimension::money, {1e-6, 1e9}},
 };
 constexpr ValueRange kTolerance = {1e-6, 10};
 

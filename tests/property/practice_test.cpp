@@ -79,7 +79,7 @@ TEST_CASE("where the bias decides, the divider is stiff", "[property][practice]"
   for (const Part& p : c.parts) weak[index(p.role)] = p.value;
   weak[index(Role::upper_divider)] *= 10;
   weak[index(Role::lower_divider)] *= 10;
-  const DesignResult other = check(read_spec(text, "spec"), built_in_catalogue(), c.device, weak);
+  const DesignResult other = check(read_spec(text, "spec"), built_in_catalogue(), c.device, choices_of(weak));
   CHECK(share(other.candidates.front(), Figure::collector_current, Cause::current_gain) > 0.5);
   CHECK(other.candidates.front().standing.key.capability < c.standing.key.capability);
 }

@@ -150,7 +150,7 @@ TEST_CASE("complete design: the published parts recomputed") {
 TEST_CASE("complete design: the search does no worse than the print under the same model") {
   const Catalogue catalogue = catalogue_with_the_transistor();
   const Spec spec = read_spec(kSpec, "textbook stage");
-  const DesignResult published = check(spec, catalogue, kDevice, kPublishedParts);
+  const DesignResult published = check(spec, catalogue, kDevice, choices_of(kPublishedParts));
   REQUIRE(published.candidates.size() == 1);
   const Candidate& theirs = published.candidates.front();
   REQUIRE(theirs.analysis.point.state == BiasState::active);
@@ -171,6 +171,6 @@ TEST_CASE("complete design: the search does no worse than the print under the sa
   CHECK(ours.error <= theirs.error);
   CHECK(found.met);
   // what is claimed of the found parts is what a recomputation of them says
-  const DesignResult again = check(spec, catalogue, kDevice, printed_values(ours));
+  const DesignResult again = check(spec, catalogue, kDevice, choices_of(printed_values(ours)));
   CHECK(again.candidates.front().error == ours.error);
 }

@@ -153,3 +153,34 @@ TEST_CASE("non-dominated: no other is as good in all and better in one", "[ranki
   CHECK(non_dominated({a, worse, other}) == std::vector<bool>{true, true, true});
   CHECK(non_dominated({a, a}) == std::vector<bool>{true, true});  // equals do not dominate each other
 }
+
+TEST_CASE("parts at hand come first in the class that leads, and by capability from 1 on", "[ranking]") {
+  RankKey at_hand = key(0.9, 1), to_buy = key(0.1, 1);
+  at_hand.to_buy = 0;
+  to_buy.to_buy = 2;
+  at_hand.capability = 1.1;
+  to_buy.capability = 1.9;
+  CHECK(comes_before(at_hand, to_buy, RankBy::capability));
+  CHECK(comes_before(to_buy, at_hand, RankBy::error));  // another error class
+  CHECK(comes_before(at_hand, to_buy, RankBy::current));
+  at_hand.capability = 0.9;
+  CHECK(comes_before(to_buy, at_hand, RankBy::capability));
+  to_buy.capability = 0.95;  // neither is producible: the capability decides
+  CHECK(comes_before(to_buy, at_hand, RankBy::capability));
+  at_hand.to_buy = to_buy.to_buy = -1;  // no stock
+  at_hand.capability = 1.1;
+  to_buy.capability = 1.9;
+  CHECK(comes_before(to_buy, at_hand, RankBy::capability));
+}
+
+TEST_CASE("by cost the cheaper comes first among those that meet the spec, unknown costs last", "[ranking]") {
+  RankKey cheap = key(0.9, 1), dear = key(0.1, 1), unknown = key(0.1, 1), missed = key(1.1, 1);
+  cheap.cost = 0.4;
+  dear.cost = 0.5;
+  unknown.cost = std::numeric_limits<double>::quiet_NaN();
+  missed.cost = 0.1;
+  CHECK(comes_before(cheap, dear, RankBy::cost));
+  CHECK(comes_before(dear, unknown, RankBy::cost));
+  CHECK(comes_before(dear, missed, RankBy::cost));
+  CHECK(leading_class(missed.error, RankBy::cost) > leading_class(dear.error, RankBy::cost));
+}

@@ -53,7 +53,8 @@ std::vector<Malformed> keys() {
       {besides(R"("input_resistence": "1k")"), "requirements.input_resistence", "did you mean \"input_resistance\"?"},
       {besides(R"("noise_figure": {"max": "3 dB"})"), "requirements.noise_figure",
        "noise_figure left out: it is not computed by this version"},
-      {besides(R"("cost": {"max": 3})"), "requirements.cost", "cost left out: it is not computed by this version"},
+      {besides(R"("settling_time": {"max": 3})"), "requirements.settling_time",
+       "settling_time left out: it is not computed by this version"},
       {besides(R"("stability_factor": {"max": 8})"), "requirements.stability_factor",
        "stability_factor left out: it is reported, never required"},
       {besides(R"("bandwidth": {"from": "input", "min": 1})"), "requirements.bandwidth.from", "one of the keys target"},
@@ -154,14 +155,28 @@ std::vector<Malformed> contradictions() {
   };
 }
 
+std::vector<Malformed> stock_and_derating() {
+  return {
+      {with(R"("parts": {"stock": ""})"), "parts.stock", "the name of a stock file"},
+      {with(R"("parts": {"stock": 5})"), "parts.stock", "text of at most 500 bytes"},
+      {with(R"("parts": {"stock_only": true})"), "parts.stock_only", "beside parts.stock"},
+      {with(R"("parts": {"stock_only": "yes"})"), "parts.stock_only", "true or false"},
+      {with(R"("parts": {"pairs": 1})"), "parts.pairs", "true or false"},
+      {with(R"("parts": {"boards": 0})"), "parts.boards", "a whole number from 1 to 1000000"},
+      {with(R"("parts": {"boards": 2.5})"), "parts.boards", "a whole number"},
+      {with(R"("parts": {"derating": {"resistor_power": "120 %"}})"), "parts.derating.resistor_power",
+       "a value from 5 % to 100 %"},
+      {with(R"("parts": {"derating": {"junction_margin": 40}})"), "parts.derating.junction_margin",
+       "a difference of temperatures such as 10 K"},
+      {with(R"("parts": {"derating": {"resistor": "50 %"}})"), "parts.derating.resistor", "resistor_"},
+      {besides(R"("cost": {"max": -1})"), "requirements.cost.max", "a value from"},
+  };
+}
+
 std::vector<Malformed> not_in_this_version() {
   return {
       {with(R"("topologies": ["common-base"])"), "topologies", "no other topology is available in this version"},
       {with(R"("topologies": [])"), "topologies", "the only topology of this version"},
-      {with(R"("parts": {"stock": "drawer.csv"})"), "parts.stock", "parts.stock is not available in this version"},
-      {with(R"("parts": {"stock_only": true})"), "parts.stock_only", "parts.stock_only is not available"},
-      {with(R"("parts": {"pairs": true})"), "parts.pairs", "its default false: parts.pairs is not available"},
-      {with(R"("parts": {"boards": 25})"), "parts.boards", "its default 1: parts.boards is not available"},
       {R"({"format": "bandwright/result", "version": 2, "spec": {"supply": 1}})", "version", "version 1"},
       {R"({"format": "bandwright/result", "version": 1})", "spec", "the spec of the result"},
   };
@@ -174,21 +189,22 @@ TEST_CASE("malformed specs: keys") { check_each(keys()); }
 TEST_CASE("malformed specs: types") { check_each(types()); }
 TEST_CASE("malformed specs: quantities") { check_each(quantities()); }
 TEST_CASE("malformed specs: contradictions") { check_each(contradictions()); }
+TEST_CASE("malformed specs: stock and derating") { check_each(stock_and_derating()); }
 TEST_CASE("malformed specs: not in this version") { check_each(not_in_this_version()); }
 
 TEST_CASE("all faults of a file are reported at once") {
   const auto faults = faults_of(R"({
     "suply": "12 V",
     "source": {"resistance": "10 Hz"},
-    "requirements": {"gain": {"min": 60, "max": 40}, "lower_cutoff": "x", "cost": 3},
-    "parts": {"boards": 2},
+    "requirements": {"gain": {"min": 60, "max": 40}, "lower_cutoff": "x", "noise_figure": 3},
+    "parts": {"boards": 0},
     "search": {"candidates": 5000},
     "assess": {"units": 1, "causes": {"collector": "5", "hFE": "off"}}
   })");
   REQUIRE(faults.size() == 11);
   for (const char* where : {"suply", "source.resistance", "requirements.gain.min", "requirements.lower_cutoff",
-                            "requirements.upper_cutoff", "requirements.cost", "parts.boards", "search.candidates",
-                            "assess.units", "assess.causes.collector", "assess.causes.hFE"}) {
+                            "requirements.upper_cutoff", "requirements.noise_figure", "parts.boards",
+                            "search.candidates", "assess.units", "assess.causes.collector", "assess.causes.hFE"}) {
     INFO(where);
     CHECK(std::count_if(faults.begin(), faults.end(), [&](const Fault& f) { return f.where == where; }) == 1);
   }

@@ -131,7 +131,9 @@ TEST_CASE("the written form: SI numbers, temperatures as strings, limits resolve
   CHECK(json["parts"]["resistors"]["series"] == "E24");
   CHECK(json["search"]["candidates"] == 10);
   CHECK(json["assess"].dump() == R"({"units":20000,"yield":0.99,"interval":0.005,"distribution":"normal"})");
-  CHECK_FALSE(json["parts"].contains("boards"));
+  CHECK(json["parts"]["boards"] == 1);
+  CHECK(json["parts"]["derating"]["junction_margin"] == "40 K");
+  CHECK(json["parts"]["derating"]["electrolytic_voltage"] == 0.8);
   CHECK_FALSE(json.contains("devices"));
   CHECK(json.begin().key() == "supply");  // the order of the format
 }
