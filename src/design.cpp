@@ -34,12 +34,10 @@ DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOp
 
   std::vector<Standing> standings;
   for (const Found& f : outcome.found) standings.push_back(f.standing);
-  std::vector<Candidate> finalists;
-  for (std::size_t i : finalists_of(standings, options.rank_by, static_cast<std::size_t>(spec.candidates))) {
-    const Found& f = outcome.found[i];
-    finalists.push_back(assemble(spec, tried[f.device], catalogue, f.parts));
-    finalists.back().standing = f.standing;
-  }
+  std::vector<Found> chosen;
+  for (std::size_t i : finalists_of(standings, options.rank_by, static_cast<std::size_t>(spec.candidates)))
+    chosen.push_back(outcome.found[i]);
+  std::vector<Candidate> finalists = assemble_all(spec, catalogue, tried, chosen, options.threads);
   assess_all(spec, options, finalists);
   rank(result, std::move(finalists));
   if (options.allocate) allocate(spec, catalogue, result);

@@ -6,6 +6,8 @@
 
 #include <algorithm>
 
+#include "assemble.hpp"
+
 namespace bandwright {
 
 namespace {
@@ -18,6 +20,13 @@ std::size_t most_exact(const std::vector<Standing>& list) {
   const auto best = std::min_element(list.begin(), list.end(),
                                      [](const Standing& a, const Standing& b) { return a.key.error < b.key.error; });
   return static_cast<std::size_t>(best - list.begin());
+}
+
+template <class Task>
+void side_by_side(int threads, std::size_t tasks, const Task& task) {
+  const int most = tbb::info::default_concurrency();
+  tbb::task_arena arena(threads > 0 ? std::min(threads, most) : most);
+  arena.execute([&] { tbb::parallel_for(std::size_t(0), tasks, task); });
 }
 
 /// The order now looks at what was simulated.
@@ -41,18 +50,25 @@ std::vector<std::size_t> finalists_of(const std::vector<Standing>& found, RankBy
   return list;
 }
 
+std::vector<Candidate> assemble_all(const Spec& spec, const Catalogue& catalogue,
+                                    const std::vector<DerivedDevice>& devices, const std::vector<Found>& found,
+                                    int threads) {
+  std::vector<Candidate> list(found.size());
+  side_by_side(threads, found.size(), [&](std::size_t i) {
+    list[i] = assemble(spec, devices[found[i].device], catalogue, found[i].parts);
+    list[i].standing = found[i].standing;
+  });
+  return list;
+}
+
 void assess_all(const Spec& spec, const DesignOptions& options, std::vector<Candidate>& candidates) {
-  const int most = tbb::info::default_concurrency();
-  tbb::task_arena arena(options.threads > 0 ? std::min(options.threads, most) : most);
-  arena.execute([&] {
-    tbb::parallel_for(std::size_t(0), candidates.size(), [&](std::size_t i) {
-      Candidate& c = candidates[i];
-      if (is_active(c)) {
-        c.assessment =
-            assess(spec, population_of(spec, c.parameters, c.offered, c.analysis), c.analysis, {options.with_response});
-      }
-      take_assessment(c);
-    });
+  side_by_side(options.threads, candidates.size(), [&](std::size_t i) {
+    Candidate& c = candidates[i];
+    if (is_active(c)) {
+      c.assessment =
+          assess(spec, population_of(spec, c.parameters, c.offered, c.analysis), c.analysis, {options.with_response});
+    }
+    take_assessment(c);
   });
 }
 

@@ -2,11 +2,17 @@
 #pragma once
 
 #include <bandwright/design.hpp>
+#include <bandwright/search.hpp>
 
 namespace bandwright {
 
 /// Indices of the alternatives worth assessing, some more than are listed, and of the most exact one.
 std::vector<std::size_t> finalists_of(const std::vector<Standing>& found, RankBy by, std::size_t listed);
+
+/// Candidates in full, side by side.
+std::vector<Candidate> assemble_all(const Spec& spec, const Catalogue& catalogue,
+                                    const std::vector<DerivedDevice>& devices, const std::vector<Found>& found,
+                                    int threads);
 
 /// Assesses every active candidate, side by side; the answer does not depend on the number of threads.
 void assess_all(const Spec& spec, const DesignOptions& options, std::vector<Candidate>& candidates);

@@ -1,4 +1,5 @@
 // The user's own parts: read, checked one by one, then against each other.
+#include <algorithm>
 #include <bandwright/catalogue.hpp>
 #include <cmath>
 #include <functional>
@@ -12,6 +13,12 @@ namespace bandwright {
 namespace {
 
 constexpr std::string_view kByteOrderMark = "\xEF\xBB\xBF";
+
+constexpr std::size_t kMostReserved = 1 << 17;  // rows; a longer list grows as it must
+
+std::size_t likely_rows(std::string_view text) {
+  return std::min(static_cast<std::size_t>(std::count(text.begin(), text.end(), '\n')), kMostReserved);
+}
 
 bool is_json(std::string_view text) {
   const std::size_t first = text.find_first_not_of(" \t\r\n");
@@ -65,6 +72,7 @@ void refuse_doubles(const std::vector<StockPart>& parts, FaultList& faults) {
 
 Stock read_stock(std::string_view text, std::string_view name, const Catalogue& catalogue) {
   Stock stock{name.empty() ? "stock" : std::string(name), {}};
+  stock.parts.reserve(likely_rows(text));
   FaultList faults(stock.name);
   StockPartReader reader(catalogue, faults);
   const auto take = [&](const StockRow& row) {

@@ -23,7 +23,10 @@ public:
     if (!root.is_object()) return refuse(faults_.file(), found_text(root), kShape);
     for (const auto& [key, value] : root.items())
       if (key != "stock") refuse(faults_.file(), key, "the key stock alone", nearest_name(key, {"stock"}));
-    if (!root.contains("stock")) return refuse(faults_.file(), "", "the key stock with " + std::string(kShape));
+    if (!root.contains("stock")) {
+      if (root.empty()) refuse(faults_.file(), "", "the key stock with " + std::string(kShape));
+      return;
+    }
     const Json& list = root.at("stock");
     if (!list.is_array()) return refuse(faults_.file() + ": stock", found_text(list), kShape);
     read_list(list, "stock");
@@ -46,29 +49,37 @@ private:
     }
   }
 
+  // False where cells are missing for a fault that is told already.
   bool take_members(const Json& part) {
-    const std::size_t before = faults_.count();
     row_.cells.fill("");
     std::array<bool, kStockColumnCount> seen{};
+    bool all_known = true;
+    bool all_read = true;
     for (const auto& [key, value] : part.items()) {
       const StockColumnInfo* column = find_stock_column(key);
       if (column == nullptr) {
-        faults_.add([&, &name = key]() -> Fault {
-          return {row_.where, name, "one of the keys " + fmt::format("{}", fmt::join(known_, ", ")),
-                  nearest_name(one_name(name), known_)};
-        });
+        refuse_key(key);
+        all_known = false;
       } else if (seen[index(column->column)]) {
         refuse(row_.where, key, "each key once");
       } else {
         seen[index(column->column)] = true;
-        take_value(column->column, value);
+        all_read = take_value(column->column, value) && all_read;
       }
     }
     state_units(part);
-    return faults_.count() == before;
+    const bool has_needed = seen[index(StockColumn::kind)] && seen[index(StockColumn::value)];
+    return all_read && (all_known || has_needed);
   }
 
-  void take_value(StockColumn column, const Json& value) {
+  void refuse_key(const std::string& key) {
+    faults_.add([&]() -> Fault {
+      return {row_.where, key, fmt::format("one of the keys {}", fmt::join(known_, ", ")),
+              nearest_name(one_name(key), known_)};
+    });
+  }
+
+  bool take_value(StockColumn column, const Json& value) {
     std::string& cell = row_.cells[index(column)];
     if (value.is_string())
       cell = trimmed(value.get_ref<const std::string&>());
@@ -76,6 +87,7 @@ private:
       cell = fmt::format("{}", value.get<double>());
     else if (!value.is_null())
       refuse(row_.where_of(column), found_text(value), "text or a number");
+    return value.is_string() || value.is_number() || value.is_null();
   }
 
   // A number is SI: a capacitance gets the unit that its text needs.

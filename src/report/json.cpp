@@ -167,7 +167,7 @@ std::string write_json(const DesignResult& result) {
   out["met"] = result.met;
   out["interrupted"] = result.interrupted;
   out["ranked_by"] = info(result.ranked_by).word;
-  out["order_reason"] = info(result.ranked_by).reason;
+  out["order_reason"] = order_reason(result);
   out["definitions"] = result.definitions;
   out["assumptions"] = result.assumptions;
   out["from_memory"] = result.from_memory;

@@ -148,7 +148,7 @@ bool any_shortfall(const DesignResult& result) {
 void add_ranking(TextSheet& sheet, const DesignResult& result) {
   if (result.candidates.empty() || (!result.searched && !any_requirement(result.spec))) return;
   const bool alone = result.candidates.size() == 1;
-  sheet.heading(alone ? "The candidate" : fmt::format("Candidates: {}", info(result.ranked_by).reason));
+  sheet.heading(alone ? "The candidate" : fmt::format("Candidates: {}", order_reason(result)));
   sheet.grid(ranking_grid(result));
   explain_columns(sheet, result);
   add_titles(sheet, result);

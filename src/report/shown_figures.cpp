@@ -53,4 +53,10 @@ std::string tolerance_text(const Tolerance& tolerance) {
   return fmt::format("-{:.4g}/+{:.4g} %", 100 * tolerance.below, 100 * tolerance.above);
 }
 
+std::string order_reason(const DesignResult& result) {
+  const Parts& parts = result.spec.parts;
+  const std::string reason = info(result.ranked_by).reason;
+  return parts.stock.empty() || parts.stock_only ? reason : reason + "; parts at hand before bought ones";
+}
+
 }  // namespace bandwright

@@ -23,4 +23,7 @@ std::string short_family(const std::string& family, Role role);
 /// "±5 %", "-20/+50 %".
 std::string tolerance_text(const Tolerance& tolerance);
 
+/// What the order puts first, in words.
+std::string order_reason(const DesignResult& result);
+
 }  // namespace bandwright

@@ -229,7 +229,7 @@ TEST_CASE("CSV goes where it is told, by the ending of its name") {
   CHECK(results.bom({"designed.json", "-o", "-", "--format", "csv", "-q", "--no-alternates"}).out == csv);
 }
 
-TEST_CASE("no input is written over") {
+TEST_CASE("no input of a list is written over") {
   const Results results;
   const std::string before = read_file(results.folder.path() / "checked.json");
   results.refused({"designed.json", "checked.json", "-o", "./checked.json"}, "choose another name");

@@ -51,7 +51,7 @@ std::vector<Malformed> form() {
       {head + "resistor,4\"K7\",1 %\n", "drawer, line 2, column 2 (value)", "each quote inside doubled"},
       {head + "resistor,4K7\n", "drawer, line 2", "found \"2 fields\"; expected 3, one for each heading"},
       {head + "resistor,4,7k,1 %\n", "drawer, line 2", "found \"4 fields\"; expected 3"},
-      {head + "resistor,4K7,1 %\rresistor,10K,1 %\r", "drawer, line 2, column 3 (tolerance)", "LF or CRLF"},
+      {head + "resistor,4K7,1 %\r", "drawer, line 2, column 3 (tolerance)", "LF or CRLF"},
       {head + "resistor,4K7,1 %\ncapacitor,10 \xB5"
               "F,\n",
        "drawer, line 3, column 2 (value)", "expected text in UTF-8"},
@@ -151,7 +151,8 @@ std::vector<Malformed> json() {
       {"[1]", "drawer: [0]", "found \"1\"; expected a part such as"},
       {"{\"stok\": []}", "drawer", "did you mean \"stock\"?"},
       {"{\"stock\": 3}", "drawer: stock", "a list of parts such as"},
-      {R"([{"kind": "resistor", "vaule": "4K7", "value": 1}])", "drawer: [0]", "did you mean \"value\"?"},
+      {R"([{"kind": "resistor", "vaule": "4K7"}])", "drawer: [0]", "did you mean \"value\"?"},
+      {"{}", "drawer", "nothing found; expected the key stock with a list of parts"},
       {R"([{"kind": "resistor", "value": "4K7"}, {"kind": "resistor", "value": "4x7"}])", "drawer: [1].value",
        "found \"4x7\"; expected a resistance"},
       {R"({"stock": [{"kind": "resistor", "value": 4700, "unit cost": 1, "unit_cost": 2}]})", "drawer: stock[0]",
@@ -189,6 +190,19 @@ TEST_CASE("all faults of a stock file are told at once, in its order") {
                       "line 2, column 7 (unit_cost)", "line 4, column 1 (kind)", "line 4, column 6 (quantity)",
                       "line 5, column 2 (value)", "line 6", "line 7, column 2 (value)", "line 7, column 3 (tolerance)",
                       "line 7, column 4 (rating)", "line 7, column 5 (family)"});
+}
+
+TEST_CASE("all faults of a stock in JSON are told at once") {
+  const auto faults = faults_of(R"({"stock": [
+    {"kind": "resistor", "value": "4x7", "shelf": 3, "quantity": -1},
+    "resistor",
+    {"kind": "capacitor", "value": {}, "family": "flim"},
+    {"kind": "capacitor", "value": 0, "family": "flim"}], "owner": "me"})");
+  std::vector<std::string> places;
+  for (const Fault& fault : faults) places.push_back(fault.where);
+  CHECK(places == std::vector<std::string>{"drawer", "drawer: stock[0]", "drawer: stock[0].value",
+                                           "drawer: stock[0].quantity", "drawer: stock[1]", "drawer: stock[2].value",
+                                           "drawer: stock[3].value", "drawer: stock[3].family"});
 }
 
 TEST_CASE("of very many faults the first are shown and the rest counted") {
