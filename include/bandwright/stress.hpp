@@ -1,8 +1,9 @@
 // Stress: what every part has to stand at the worst corner of all units, supply and ambient.
 //
 // Every corner of the box is solved: both ends of each cause that acts on the operating point (resistors, hFE, VA,
-// ICBO, VBE), at every corner of supply and ambient; the junction's rise is held, as in the worst case of figures. A
-// corner that is not active is counted as the whole supply across every part, and as the transistor's cut-off state.
+// ICBO, VBE), at every corner of supply and ambient; the junction's rise is held, as in the worst case of figures.
+// Where the best corner is not yet the extreme (a transistor dissipates most at half of the supply) a bounded local
+// search goes on inside. A corner without an operating point counts with all that the rails can put across each part.
 #pragma once
 
 #include <array>
@@ -33,7 +34,7 @@ struct WorstStress {
   StressRange junction_temperature;           ///< K: ambient + theta_JA x dissipation of the same corner
 };
 
-/// The extremes of a design's stresses, exact over the corners. Some hundred to two thousand operating points.
+/// The extremes of a design's stresses: not less than at any corner. Some hundred to ten thousand operating points.
 WorstStress worst_stress(const Spec& spec, const Population& population);
 
 /// The same where the nominal unit is not active: nothing better is known than that no node leaves the rails.

@@ -30,11 +30,18 @@ public:
   }
 
   /// Bounded local search where the best corner is not yet the extreme: the transistor dissipates most at half of the
-  /// supply, a resistor beside its like.
+  /// supply, a resistor beside its like. Other humps stand near the corners beside the best one.
   void polish() {
     const double least = kInward * std::fabs(height_);
     if (!(won_inside() > least)) return;
-    search();
+    scale_ = std::fabs(height_);
+    const Coordinates corner = x_;
+    search_from(corner);
+    for (std::size_t k = 0; k < corner.size(); ++k) {
+      Coordinates beside = corner;
+      beside[k] = 1 - beside[k];
+      search_from(beside);
+    }
     Coordinates ends = x_;
     for (double& share : ends) share = share < kNearEnd ? 0 : share > 1 - kNearEnd ? 1 : share;
     const double there = height(ends);
@@ -67,15 +74,13 @@ private:
     return sum;
   }
 
-  void search() {
-    Coordinates x = x_;
+  void search_from(Coordinates x) {
     nlopt::opt optimiser(nlopt::LD_SLSQP, static_cast<unsigned>(x.size()));
     optimiser.set_lower_bounds(0.0);
     optimiser.set_upper_bounds(1.0);
     optimiser.set_maxeval(kPolishSteps);
     optimiser.set_xtol_rel(1e-6);
     optimiser.set_max_objective(objective, this);
-    scale_ = std::fabs(height_);
     double value = 0;
     try {
       optimiser.optimize(x, value);

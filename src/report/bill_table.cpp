@@ -85,7 +85,7 @@ void add_rows(TextSheet& sheet, const Bill& bill) {
                   {"family", false}, {"polarity", false}, {"part number", false}, {"unit cost", true},
                   {"cost", true}};
   grid.flexible = {8, 1, 9, 10};
-  grid.dispensable = {5, 2};
+  grid.dispensable = {5, 2, 11};
   for (const BillRow& row : bill.rows) grid.add(cells(row));
   sheet.grid(grid);
 }

@@ -24,10 +24,10 @@ const Json* row_of(const Json& bill, const std::string& designator) {
 TEST_CASE("what the drawer holds is named, and what it lacks is counted") {
   const TemporaryFolder folder;
   folder.write("drawer.csv",
-               "kind,value,tolerance,family,quantity,unit_cost,part_number\r\n"
-               "resistor,47k,1 %,metal-film,300,0.011,RX-47K\r\n"
-               "resistor,10k,1 %,metal-film,20,0.012,=RX-10K\r\n"
-               "capacitor,100n,10 %,x7r,4,0.05,CX-100N\r\n");
+               "kind,value,tolerance,rating,family,quantity,unit_cost,part_number\r\n"
+               "resistor,47k,1 %,,metal-film,300,0.011,RX-47K\r\n"
+               "resistor,10k,1 %,,metal-film,20,0.012,=RX-10K\r\n"
+               "capacitor,100n,10 %,50 V,x7r,4,0.05,CX-100N\r\n");
   folder.write("stage.json", R"({
     "supply": "12 V", "load": {"resistance": "10k"},
     "requirements": {"gain": {"target": "30 dB", "tolerance": "3 dB"}, "lower_cutoff": {"max": "60 Hz"},
