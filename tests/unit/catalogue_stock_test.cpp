@@ -3,6 +3,7 @@
 #include <cmath>
 #include <locale>
 #include <map>
+#include <random>
 
 #include "catch.hpp"
 #include "places.hpp"
@@ -194,6 +195,32 @@ TEST_CASE("the example is a drawer of 60 resistor and 20 capacitor values and fo
     CHECK((part.part_number.empty() || part.part_number.starts_with("DRAWER-")));
     CHECK((part.kind == PartKind::transistor || coarsest_series(part.value) != nullptr));
   }
+}
+
+TEST_CASE("whatever the bytes, a stock is read or its faults are told") {
+  std::mt19937 random(12);
+  const std::string letters = ",\"\n\r#;0-%/ .eKVWF\xC2\xB5\xFF{[]}:";
+  int read = 0;
+  int refused = 0;
+  for (int run = 0; run < 400; ++run) {
+    std::string text = run % 2 == 0 ? stock_to_start_from() : R"([{"kind": "resistor", "value": "4K7", "rating": 5}])";
+    for (int change = 0; change < 3; ++change) {
+      const std::size_t at = random() % text.size();
+      if (random() % 2 == 0)
+        text[at] = letters[random() % letters.size()];
+      else
+        text.erase(at, random() % 20);
+    }
+    try {
+      parts_of(text);
+      ++read;
+    } catch (const InputError& error) {
+      CHECK_FALSE(error.faults().empty());
+      ++refused;
+    }
+  }
+  CHECK(read > 20);
+  CHECK(refused > 100);
 }
 
 TEST_CASE("a locale with a decimal comma changes nothing of what is read") {
