@@ -112,19 +112,14 @@ std::vector<const Transistor*> fitting_transistors(const Spec& spec, const Catal
     if (spec.devices.empty() && t.pnp == spec.pnp()) list.push_back(&t);
   }
   // a stock of resistors and capacitors alone leaves the transistor open
-  const auto at_hand = [&](const Transistor* t) {
-    return std::any_of(catalogue.stock.parts.begin(), catalogue.stock.parts.end(), [&](const StockPart& s) {
-      const bool enough = !s.quantity || *s.quantity >= spec.parts.boards;
-      return s.kind == PartKind::transistor && s.type == t->type && enough;
-    });
-  };
-  if (spec.parts.stock_only && spec.devices.empty() && std::any_of(list.begin(), list.end(), at_hand))
-    std::erase_if(list, [&](const Transistor* t) { return !at_hand(t); });
+  if (spec.parts.stock_only && holds_transistors(catalogue.stock))
+    std::erase_if(list, [&](const Transistor* t) { return !is_at_hand(catalogue.stock, t->type, spec.parts.boards); });
   return list;
 }
 
-Spec with_device(Spec spec, const std::string& device) {
+Spec of_given_parts(Spec spec, const std::string& device) {
   spec.devices = {device};
+  spec.parts.stock_only = false;
   return spec;
 }
 

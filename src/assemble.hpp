@@ -11,7 +11,8 @@ DesignResult empty_result(const Spec& spec, const Catalogue& catalogue, RankBy b
 /// The transistors that a spec names, or every one of the right polarity.
 std::vector<const Transistor*> fitting_transistors(const Spec& spec, const Catalogue& catalogue);
 
-Spec with_device(Spec spec, const std::string& device);
+/// The spec as it bears on parts that are given: one device, from the stock or not.
+Spec of_given_parts(Spec spec, const std::string& device);
 
 /// Everything that is reported of one stage.
 Candidate assemble(const Spec& spec, const DerivedDevice& device, const Catalogue& catalogue,

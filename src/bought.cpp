@@ -101,7 +101,7 @@ void buy(const Spec& spec, const Catalogue& catalogue, const OfferedParts& chose
   count_bias_loss(spec, c.parameters, c.stress, c.offered);
   std::string reason;
   c.parts = parts_list(spec, c.offered, c.stress, &reason);
-  c.transistor = transistor_part(catalogue, c.device, c.stress);
+  c.transistor = transistor_part(catalogue, c.device, spec.parts.boards, c.stress);
   c.stress_table = stress_table(spec, c.parts, c.parameters, c.stress);
   if (!reason.empty()) c.notes["parts"] = reason;
   add_bias_notes(c);

@@ -48,7 +48,7 @@ DesignResult design(const Spec& spec, const Catalogue& catalogue, const DesignOp
 
 DesignResult check(const Spec& spec, const Catalogue& catalogue, const std::string& device, const PartChoices& choices,
                    const DesignOptions& options) {
-  if (auto faults = check_against_catalogue(with_device(spec, device), catalogue); !faults.empty()) {
+  if (auto faults = check_against_catalogue(of_given_parts(spec, device), catalogue); !faults.empty()) {
     for (Fault& f : faults) {
       if (f.where == "devices[0]") f.where = "device";
     }

@@ -148,6 +148,10 @@ const Series* coarsest_series(double value);
 enum class Connection { single, series, parallel };
 const char* word(Connection connection);  ///< "series"
 
+/// What two parts of a kind make together: the sum for resistors in series and capacitors in parallel, else the
+/// reciprocal of the sum of reciprocals.
+double paired_value(PartKind kind, Connection connection, double first, double second);
+
 /// One part of a pair.
 struct PairedPart {
   double value = 0;  ///< printed

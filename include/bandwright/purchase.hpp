@@ -58,8 +58,8 @@ OfferedParts with_settled_polarity(const Spec& spec, OfferedParts parts, const W
 std::vector<Part> parts_list(const Spec& spec, const OfferedParts& parts, const WorstStress& stress,
                              std::string* reason = nullptr);
 
-/// The transistor as a part: the stock's one where the stock holds the type.
-Part transistor_part(const Catalogue& catalogue, const std::string& type, const WorstStress& stress);
+/// The transistor as a part: the stock's one where the stock holds the type for all boards.
+Part transistor_part(const Catalogue& catalogue, const std::string& type, int boards, const WorstStress& stress);
 
 /// What a part stands at its worst corner beside what it may.
 struct StressRow {

@@ -70,8 +70,8 @@ std::string format_quantity(double value, Dimension dimension, int digits = 4);
 /// 4700 gives "4K7", 1e-7 F gives "100n". Source: IEC 60062:2016, letter in place of the decimal point.
 std::string value_code(double value, Dimension dimension);
 
-/// The tolerance letter of IEC 60062, "F" for 1 %; empty where its table has none. Below 10 pF the letters of capacitors
-/// mean something else: see below. Source and marks: src/units/tolerance_letters.cpp.
+/// The tolerance letter of IEC 60062, "F" for 1 %; empty where its table has none. Below 10 pF the letters of
+/// capacitors mean something else: see below. Source and marks: src/units/tolerance_letters.cpp.
 std::string tolerance_letter(const Tolerance& tolerance);
 
 /// What a tolerance letter of IEC 60062 stands for; capital letters only.

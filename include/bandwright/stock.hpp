@@ -40,6 +40,12 @@ struct Stock {
   std::vector<StockPart> parts;
 };
 
+/// True where the stock says anything of transistors.
+bool holds_transistors(const Stock& stock);
+
+/// True where it holds a type of transistor for so many boards.
+bool is_at_hand(const Stock& stock, std::string_view type, int boards);
+
 /// Reads a stock; JSON where the text begins with { or [. Families and transistors are names or keys of `catalogue`.
 /// Throws InputError with every fault: line, column heading, what was found, what is right.
 Stock read_stock(std::string_view text, std::string_view name, const Catalogue& catalogue);

@@ -29,7 +29,8 @@ LoadBounds rail_bounds(const Spec& spec, const ResistorEnds& ends, double therma
 
 /// From the largest and the smallest collector current at both ends of the supply. It is largest with a large R2, hFE,
 /// ICBO and ambient and a small R1, RC, RE, VA and VBE, smallest the other way round; every voltage is bounded by the
-/// currents and the ends of its resistors. `units`: of its causes those of the transistor count, and the rise; `nominal`: active.
+/// currents and the ends of its resistors. `units`: of its causes those of the transistor count, and the rise;
+/// `nominal`: active.
 LoadBounds load_bounds(const Spec& spec, const Population& units, const ResistorEnds& ends,
                        const OperatingPoint& nominal);
 

@@ -108,6 +108,27 @@ bool is_at_hand(const Catalogue& catalogue, const RoleInfo& role, double value) 
                      [&](const StockPart& s) { return s.kind == role.kind && same_value(s.value, value); });
 }
 
+/// A stock that lists transistors is all there is of them.
+void check_stock_transistors(const Spec& spec, const Catalogue& catalogue, std::vector<Fault>& faults) {
+  if (!holds_transistors(catalogue.stock)) return;
+  const int boards = spec.parts.boards;
+  for (std::size_t i = 0; i < spec.devices.size(); ++i) {
+    if (is_at_hand(catalogue.stock, spec.devices[i], boards)) continue;
+    faults.push_back({"devices[" + std::to_string(i) + "]", spec.devices[i],
+                      "a transistor of the stock, one for each board; or parts.stock_only left out", ""});
+  }
+  if (!spec.devices.empty()) return;
+  const bool any = std::any_of(catalogue.transistors.begin(), catalogue.transistors.end(), [&](const Transistor& t) {
+    return t.pnp == spec.pnp() && is_at_hand(catalogue.stock, t.type, boards);
+  });
+  if (!any)
+    faults.push_back({"parts.stock",
+                      std::string("no ") + (spec.pnp() ? "PNP" : "NPN") + " transistor for " + std::to_string(boards) +
+                          (boards == 1 ? " board" : " boards"),
+                      "one that the supply takes; a stock without any transistor leaves the choice to the catalogue",
+                      ""});
+}
+
 /// A stock that is named and not there, or too small for what is asked.
 void check_stock(const Spec& spec, const Catalogue& catalogue, std::vector<Fault>& faults) {
   if (!spec.parts.stock.empty() && catalogue.stock.name.empty()) {
@@ -115,6 +136,7 @@ void check_stock(const Spec& spec, const Catalogue& catalogue, std::vector<Fault
         {"parts.stock", spec.parts.stock, "the stock's parts in the catalogue, as read_stock gives them", ""});
   }
   if (!spec.parts.stock_only) return;
+  check_stock_transistors(spec, catalogue, faults);
   for (const RoleInfo& role : roles()) {
     const auto& pin = spec.parts.pinned[index(role.role)];
     if (pin && *pin > 0 && !is_at_hand(catalogue, role, *pin)) {

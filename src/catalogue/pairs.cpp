@@ -30,6 +30,10 @@ bool adds_up(PartKind kind, Connection connection) {
   return (kind == PartKind::resistor) == (connection == Connection::series);
 }
 
+double paired_value(PartKind kind, Connection connection, double first, double second) {
+  return both(first, second, adds_up(kind, connection));
+}
+
 OfferedValue joined(const OfferedValue& a, const OfferedValue& b, Connection connection) {
   const bool sum = adds_up(kind_of(a), connection);
   OfferedValue o = a;

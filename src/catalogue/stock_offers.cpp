@@ -12,7 +12,7 @@ namespace bandwright {
 namespace {
 
 bool is_named(const PartRules& rules, const Family& family) {
-  if (rules.families.empty()) return true;
+  if (rules.families.empty()) return family.bias_loss == 0;  // a class 2 ceramic only where it is asked for
   return std::any_of(rules.families.begin(), rules.families.end(),
                      [&](const std::string& key) { return same_name(key, family.key); });
 }
@@ -61,6 +61,17 @@ const StockPart* find_stock(const Catalogue& catalogue, PartKind kind, const Par
     if (fits) return &part;
   }
   return nullptr;
+}
+
+bool holds_transistors(const Stock& stock) {
+  return std::any_of(stock.parts.begin(), stock.parts.end(),
+                     [](const StockPart& s) { return s.kind == PartKind::transistor; });
+}
+
+bool is_at_hand(const Stock& stock, std::string_view type, int boards) {
+  return std::any_of(stock.parts.begin(), stock.parts.end(), [&](const StockPart& s) {
+    return s.kind == PartKind::transistor && same_name(s.type, type) && (!s.quantity || *s.quantity >= boards);
+  });
 }
 
 }  // namespace bandwright

@@ -138,6 +138,10 @@ void tell_state(const PickedBoard& board, bool quiet) {
     if (!quiet || !agreement.differing.empty())
       complain(agreement_text(agreement, printable(board.file), board.stored.rank));
   }
+  const auto& assessment = board.candidate().assessment;
+  if (board.result.met && assessment && assessment->verdict == "not met")
+    complain(fmt::format("Candidate {} of {} meets its spec nominally, but too few built units do: yield {:.3g} %",
+                         board.stored.rank, printable(board.file), 100 * assessment->yield.share()));
   if (!board.result.met)
     complain(fmt::format("Candidate {} of {} does not meet its spec: {}", board.stored.rank, printable(board.file),
                          shortfall_text(board)));

@@ -118,8 +118,8 @@ int complaining(const std::string& lines, ExitStatus status) {
 }  // namespace
 
 const std::vector<Command>& commands() {
-  static const std::vector<Command> table = {design_command(), check_command(), compare_command(), bom_command(),
-                                             catalogue_command(), stock_command()};
+  static const std::vector<Command> table = {design_command(), check_command(),     compare_command(),
+                                             bom_command(),    catalogue_command(), stock_command()};
   return table;
 }
 

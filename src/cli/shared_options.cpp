@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <array>
+#include <bandwright/fault.hpp>
 #include <filesystem>
 
 #include "cli/exit_status.hpp"
@@ -89,8 +90,14 @@ Catalogue catalogue_of(const Arguments& arguments, const Spec& spec, const std::
   if (spec.parts.stock.empty()) return catalogue;
   const bool named_here = std::any_of(arguments.overrides.begin(), arguments.overrides.end(),
                                       [](const Override& o) { return o.first == "stock"; });
-  const NamedText text = read_text(stock_path(spec.parts.stock, spec_file, named_here));
-  catalogue.stock = read_stock(text.text, text.name, catalogue);
+  try {
+    const NamedText text = read_text(stock_path(spec.parts.stock, spec_file, named_here));
+    catalogue.stock = read_stock(text.text, text.name, catalogue);
+  } catch (const FileError& fault) {
+    if (named_here) throw;
+    throw FileError(fmt::format("{}\nit is the stock that {} names, looked for beside it and in this folder",
+                                fault.what(), printable(spec_file)));
+  }
   return catalogue;
 }
 

@@ -56,7 +56,7 @@ Command stock_command() {
       "Reads the user's own parts, comma-separated values or JSON, tells every fault with line and column, and says "
       "what the file holds and what is taken where a row says nothing. With - it reads standard input.",
       {"bandwright stock drawer.csv", "bandwright stock --start -o drawer.csv",
-       "bandwright stock drawer.csv --format json -o drawer.json"},
+       "bandwright stock drawer.csv --format json -o summary.json"},
       options,
       run_stock};
 }

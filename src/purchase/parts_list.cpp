@@ -198,7 +198,7 @@ std::vector<Part> parts_list(const Spec& spec, const OfferedParts& parts, const 
   return list;
 }
 
-Part transistor_part(const Catalogue& catalogue, const std::string& type, const WorstStress& stress) {
+Part transistor_part(const Catalogue& catalogue, const std::string& type, int boards, const WorstStress& stress) {
   Part part;
   part.designator = "Q1";
   part.kind = PartKind::transistor;
@@ -214,7 +214,7 @@ Part transistor_part(const Catalogue& catalogue, const std::string& type, const 
     part.invented_cost = t->invented_cost;
   }
   for (const StockPart& s : catalogue.stock.parts) {
-    if (s.kind != PartKind::transistor || s.type != part.code) continue;
+    if (s.kind != PartKind::transistor || s.type != part.code || (s.quantity && *s.quantity < boards)) continue;
     if (!std::isnan(s.unit_cost)) {
       part.unit_cost = s.unit_cost;
       part.invented_cost = false;

@@ -5,6 +5,7 @@
 #include "report/sections.hpp"
 #include "report/shown_assessment.hpp"
 #include "report/shown_figures.hpp"
+#include "units/printable.hpp"
 
 namespace bandwright {
 
@@ -85,6 +86,15 @@ void add_role_rules(NamedLines& lines, const Parts& parts) {
   if (!pinned.empty()) lines.add("fixed", join(pinned, "; "));
 }
 
+void add_stock(NamedLines& lines, const Parts& parts) {
+  if (!parts.stock.empty()) {
+    const std::string boards = parts.boards == 1 ? "one board" : fmt::format("{} boards", parts.boards);
+    lines.add("stock", fmt::format("{}, {}, for {}", printable(parts.stock),
+                                   parts.stock_only ? "nothing else" : "before bought parts", boards));
+  }
+  if (parts.pairs) lines.add("pairs", "two parts in one role, where single values miss");
+}
+
 void add_requirements(TextSheet& sheet, const Spec& spec) {
   TextGrid grid{{{"figure", false}, {"target", true}, {"accepted", false}, {"taken", false}}, {}, {2}};
   for (const FigureInfo& figure : figures()) {
@@ -127,10 +137,16 @@ void add_asked_for(TextSheet& sheet, const DesignResult& result) {
   lines.add("ambient", condition_text(spec.ambient, Dimension::temperature));
   lines.add("built units", assess_text(spec.assess));
   if (result.searched) {
-    lines.add("resistors", rules_text(spec.parts.resistors, Dimension::resistance));
-    lines.add("capacitors", rules_text(spec.parts.capacitors, Dimension::capacitance));
+    add_stock(lines, spec.parts);
+    if (!spec.parts.stock_only) {
+      lines.add("resistors", rules_text(spec.parts.resistors, Dimension::resistance));
+      lines.add("capacitors", rules_text(spec.parts.capacitors, Dimension::capacitance));
+    }
     add_role_rules(lines, spec.parts);
-    lines.add("transistors", spec.devices.empty() ? "every fitting type of the catalogue" : join(spec.devices, ", "));
+    const char* any = spec.parts.stock_only
+                          ? "those of the stock; every fitting type of the catalogue where it has none"
+                          : "every fitting type of the catalogue";
+    lines.add("transistors", spec.devices.empty() ? any : join(spec.devices, ", "));
     lines.add("search", fmt::format("up to {} candidates, seed {}", spec.candidates, spec.seed));
   }
   sheet.grid(lines.grid);

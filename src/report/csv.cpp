@@ -39,9 +39,7 @@ std::vector<std::string> fields_of(const Candidate& candidate) {
                                      csv_number(candidate.error), csv_number(candidate.tolerance_sensitivity)};
   for (const FigureInfo& figure : figures())
     if (is_column(figure)) fields.push_back(csv_number(shown_value(candidate, figure)));
-  std::array<std::string, kRoleCount> values;
-  for (const Part& part : candidate.parts) values[index(part.role)] = csv_number(part.value);
-  fields.insert(fields.end(), values.begin(), values.end());
+  for (const double value : role_values(candidate.parts)) fields.push_back(value > 0 ? csv_number(value) : "");
   for (const AssessedColumn& column : kAssessed)
     fields.push_back(candidate.assessment ? csv_number(column.value(*candidate.assessment)) : "");
   fields.push_back(candidate.non_dominated ? "true" : "false");

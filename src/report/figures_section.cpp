@@ -19,6 +19,11 @@ std::string margin_text(double margin) {
   return fmt::format("{:.{}f}{}", margin, std::fabs(margin) < 10 ? 2 : 0, margin < 0 ? " short" : "");
 }
 
+bool has_invented_costs(const Candidate& candidate) {
+  return candidate.transistor.invented_cost || std::any_of(candidate.parts.begin(), candidate.parts.end(),
+                                                           [](const Part& part) { return part.invented_cost; });
+}
+
 std::vector<std::string> figure_row(const Candidate& candidate, const FigureInfo& figure, const Spec& spec) {
   const auto& requirement = spec.requirement(figure.figure);
   std::string asked;
@@ -28,7 +33,8 @@ std::vector<std::string> figure_row(const Candidate& candidate, const FigureInfo
     const double value = candidate.margins[index(figure.figure)];
     margin = margin_text(value);
   }
-  return {figure.label, figure.symbol, figure_text(candidate, figure), asked, margin};
+  const bool invented = figure.figure == Figure::cost && has_invented_costs(candidate);
+  return {figure.label, figure.symbol, figure_text(candidate, figure) + (invented ? "*" : ""), asked, margin};
 }
 
 // Figures shown in a section of their own.
@@ -55,6 +61,7 @@ void add_figures(TextSheet& sheet, const Candidate& candidate, const Spec& spec)
     }
   }
   sheet.grid(grid);
+  if (has_invented_costs(candidate)) sheet.line("*: with costs invented for demonstration; nobody sells at them.");
   const FigureValues& values = candidate.analysis.figures;
   const double ratio = values[index(Figure::upper_cutoff)] / values[index(Figure::lower_cutoff)];
   if (!(ratio < kNarrowBand)) return;

@@ -4,6 +4,7 @@
 
 #include "report/candidate_sections.hpp"
 #include "report/shown_figures.hpp"
+#include "units/printable.hpp"
 
 namespace bandwright {
 
@@ -29,11 +30,19 @@ std::vector<std::string> part_row(const Part& part) {
           short_family(part.family, part.role),
           rating_text(part),
           part.polarity,
-          part.part_number};
+          printable(part.part_number)};
 }
 
 void add_note(TextSheet& sheet, const Part& part) {
-  if (!part.note.empty()) sheet.line(part.designator + ": " + part.note);
+  if (!part.note.empty()) sheet.line(part.designator + ": " + printable(part.note));
+}
+
+void add_at_hand(TextSheet& sheet, const Candidate& candidate) {
+  std::vector<std::string> names;
+  for (const Part& part : candidate.parts)
+    if (part.from_stock) names.push_back(part.designator);
+  if (candidate.transistor.from_stock) names.push_back(candidate.transistor.designator);
+  if (!names.empty()) sheet.line("From the stock: " + join(names, ", ") + ".");
 }
 
 }  // namespace
@@ -48,8 +57,9 @@ void add_parts(TextSheet& sheet, const Candidate& candidate) {
   grid.dispensable = {4};
   for (const Part& part : candidate.parts) grid.add(part_row(part));
   grid.add({"Q1", "transistor", candidate.device, "", "", "", candidate.parameters.pnp ? "PNP" : "NPN", "", "",
-            candidate.transistor.part_number});
+            printable(candidate.transistor.part_number)});
   sheet.grid(grid);
+  add_at_hand(sheet, candidate);
   for (const Part& part : candidate.parts) add_note(sheet, part);
   add_note(sheet, candidate.transistor);
   for (const Package& one : candidate.packages) {

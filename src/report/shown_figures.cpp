@@ -53,6 +53,19 @@ std::string tolerance_text(const Tolerance& tolerance) {
   return fmt::format("-{:.4g}/+{:.4g} %", 100 * tolerance.below, 100 * tolerance.above);
 }
 
+PartValues role_values(const std::vector<Part>& parts) {
+  PartValues values{};
+  for (const Part& part : parts) {
+    double& value = values[index(part.role)];
+    if (value == 0) {
+      value = part.value;
+    } else {
+      value = paired_value(part.kind, part.connection, value, part.value);
+    }
+  }
+  return values;
+}
+
 std::string order_reason(const DesignResult& result) {
   const Parts& parts = result.spec.parts;
   const std::string reason = info(result.ranked_by).reason;

@@ -23,6 +23,9 @@ std::string short_family(const std::string& family, Role role);
 /// "±5 %", "-20/+50 %".
 std::string tolerance_text(const Tolerance& tolerance);
 
+/// The value in each role, of a pair that of both parts together; 0: absent.
+PartValues role_values(const std::vector<Part>& parts);
+
 /// What the order puts first, in words.
 std::string order_reason(const DesignResult& result);
 

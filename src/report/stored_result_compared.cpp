@@ -62,15 +62,36 @@ std::optional<Part> read_part(const StoredFields& fields) {
   return part;
 }
 
+std::optional<Connection> connection_of(const StoredFields& part) {
+  const std::string name = part.text("connection");
+  for (const Connection connection : {Connection::series, Connection::parallel})
+    if (name == word(connection)) return connection;
+  return std::nullopt;
+}
+
+/// Two parts of a role as one: "47K+1K" in series, "47K||1K" in parallel.
+void join_pair(Part& first, const Part& second, Connection connection) {
+  first.connection = connection;
+  first.value = paired_value(info(first.role).kind, connection, first.value, second.value);
+  first.code += (connection == Connection::series ? "+" : "||") + second.code;
+  first.series.clear();
+}
+
 std::vector<Part> read_parts(const StoredFields& candidate) {
   std::vector<Part> parts;
   candidate.demand("parts", "an array of parts, each with role and value");
   for (const StoredFields& fields : candidate.objects("parts")) {
     const auto part = read_part(fields);
     if (!part) continue;
-    const auto is_same = [&](const Part& other) { return other.role == part->role; };
-    if (std::any_of(parts.begin(), parts.end(), is_same)) fields.object_to("role", "each role once");
-    parts.push_back(*part);
+    const auto same =
+        std::find_if(parts.begin(), parts.end(), [&](const Part& other) { return other.role == part->role; });
+    if (same == parts.end()) {
+      parts.push_back(*part);
+    } else if (const auto connection = connection_of(fields)) {
+      join_pair(*same, *part, *connection);
+    } else {
+      fields.object_to("role", "each role once, or two parts with their connection");
+    }
   }
   return parts;
 }

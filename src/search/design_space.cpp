@@ -26,14 +26,14 @@ int nearest(const std::vector<OfferedValue>& offered, double value) {
   return static_cast<int>((lower ? below : above) - offered.begin());
 }
 
-void add_stock(const Catalogue& catalogue, DesignSpace& space) {
+void add_stock(const Catalogue& catalogue, int boards, DesignSpace& space) {
   const std::string& type = space.device->parameters.type;
   if (const Transistor* t = catalogue.find_transistor(type)) space.unit_cost = t->unit_cost;
   space.has_stock = !catalogue.stock.parts.empty();
+  space.device_in_stock = is_at_hand(catalogue.stock, type, boards);
   for (const StockPart& s : catalogue.stock.parts) {
-    if (s.kind != PartKind::transistor || s.type != type) continue;
-    space.device_in_stock = true;
-    if (!std::isnan(s.unit_cost)) space.unit_cost = s.unit_cost;
+    const bool own = space.device_in_stock && s.kind == PartKind::transistor && s.type == type;
+    if (own && !std::isnan(s.unit_cost)) space.unit_cost = s.unit_cost;
   }
 }
 
@@ -52,7 +52,7 @@ DesignSpaces design_spaces(const Spec& spec, const Catalogue& catalogue, const s
       space.device_index = d;
       space.device = &devices[d];
       space.variant = &v;
-      add_stock(catalogue, space);
+      add_stock(catalogue, spec.parts.boards, space);
       bool complete = true;
       for (std::size_t i = 0; i < kRoleCount; ++i) {
         if (!v.present[i]) continue;

@@ -1,5 +1,6 @@
 #include "search/found.hpp"
 
+#include <algorithm>
 #include <bandwright/margins.hpp>
 #include <bandwright/stress.hpp>
 
@@ -23,6 +24,21 @@ Found found_from(Evaluator& evaluator, const Ranked& r) {
 }
 
 namespace {
+
+/// The first part of the stock of which more are needed than it holds; empty: it has enough.
+std::string shortage_of(const Found& f, const Spec& spec) {
+  for (const OfferedValue& part : f.parts) {
+    if (part.stock == nullptr || !part.stock->quantity) continue;
+    const auto uses = std::count_if(f.parts.begin(), f.parts.end(),
+                                    [&](const OfferedValue& other) { return other.stock == part.stock; });
+    const long needed = uses * spec.parts.boards;
+    const Dimension dimension = part.stock->kind == PartKind::resistor ? Dimension::resistance : Dimension::capacitance;
+    if (needed > *part.stock->quantity)
+      return "the stock holds " + std::to_string(*part.stock->quantity) + " of " +
+             format_quantity(part.value, dimension) + ", " + std::to_string(needed) + " are needed";
+  }
+  return "";
+}
 
 /// The first load at its worst corner that no rating holds; empty: all hold.
 std::string overload_of(const Found& f, const Spec& spec, const BipolarParameters& device, const Analysis& nominal) {
@@ -71,7 +87,8 @@ std::string nearest_miss(const Found& f, const Spec& spec, const std::vector<Der
   const bool active = a.point.state == BiasState::active;
   const bool has_room =
       active && a.point.collector_emitter_voltage >= kLeastCollectorEmitter && drop >= kLeastCollectorDrop;
-  const std::string overload = has_room ? overload_of(f, spec, device, a) : "";
+  const std::string shortage = shortage_of(f, spec);
+  const std::string overload = !shortage.empty() ? shortage : has_room ? overload_of(f, spec, device, a) : "";
   const std::string head = "no combination of the offered values is active with VCE of at least " +
                            volts(kLeastCollectorEmitter) + " and IC RC of at least " + volts(kLeastCollectorDrop) +
                            " within the transistor's limits, with a rating that holds at every corner and enough in "

@@ -11,8 +11,8 @@ namespace bandwright {
 namespace {
 
 constexpr std::size_t kTaken = 8;  // of the stages found
-constexpr int kMostPairs = 3;      // in one stage
-constexpr double kReach = 1.6;     // a pair lies within this factor of the single value
+constexpr int kMostPairs = 4;      // in one stage
+constexpr double kReach = 2.2;     // a pair lies within this factor of the single value
 
 const DesignSpace* space_of(const DesignSpaces& all, const Found& f) {
   for (const DesignSpace& space : all.spaces)
@@ -20,7 +20,7 @@ const DesignSpace* space_of(const DesignSpaces& all, const Found& f) {
   return nullptr;
 }
 
-/// The stage's own parts alone; one role at a time is opened to pairs.
+/// The stage's own parts alone; one role at a time is opened.
 class Pairing {
 public:
   Pairing(const Spec& spec, const DesignSpace& space, const Found& start, RankBy by)
@@ -35,12 +35,12 @@ public:
     best_ = start;
   }
 
+  /// One part after another, to any single value or pair that helps most, until the spec is met or none helps.
   Found run() {
-    for (int pairs = 0; pairs < kMostPairs && !best_.standing.key.meets(); ++pairs) {
+    while (!best_.standing.key.meets()) {
       std::optional<Found> better;
-      for (std::size_t role = 0; role < kRoleCount; ++role) {
-        if (space_.has(role) && best_.parts[role].connection == Connection::single) try_pairs(role, better);
-      }
+      for (std::size_t role = 0; role < kRoleCount; ++role)
+        if (space_.has(role)) try_values(role, better);
       if (!better) break;
       best_ = *better;
       for (std::size_t i = 0; i < kRoleCount; ++i)
@@ -50,19 +50,27 @@ public:
   }
 
 private:
-  void try_pairs(std::size_t role, std::optional<Found>& better) {
+  /// Every pair within reach, where the stage may have one more, and every single value.
+  std::vector<OfferedValue> values_for(std::size_t role) const {
+    std::vector<OfferedValue> list;
+    const auto is_pair = [](const OfferedValue& o) { return o.connection != Connection::single; };
+    const bool may_pair =
+        is_pair(best_.parts[role]) || std::count_if(best_.parts.begin(), best_.parts.end(), is_pair) < kMostPairs;
     const double value = best_.parts[role].working_value;
+    if (may_pair) list = pairs_between(*all_.offered[role], spec_.parts.boards, value / kReach, value * kReach);
+    list.insert(list.end(), all_.offered[role]->begin(), all_.offered[role]->end());
+    return list;
+  }
+
+  void try_values(std::size_t role, std::optional<Found>& better) {
     const std::vector<OfferedValue> kept = lists_[role];
-    lists_[role] = pairs_between(*all_.offered[role], spec_.parts.boards, value / kReach, value * kReach);
-    if (!lists_[role].empty()) {
-      Evaluator evaluator(spec_, space_, by_);
-      GridPoint p = point_;
-      for (std::size_t i = 0; i < lists_[role].size(); ++i) {
-        p[role] = static_cast<std::int16_t>(i);
-        const double least = (better ? *better : best_).standing.key.error;
-        if (evaluator.error(p) >= least) continue;
-        better = found_from(evaluator, {p, evaluator.key(p)});
-      }
+    lists_[role] = values_for(role);
+    Evaluator evaluator(spec_, space_, by_);
+    GridPoint p = point_;
+    for (std::size_t i = 0; i < lists_[role].size(); ++i) {
+      p[role] = static_cast<std::int16_t>(i);
+      const double least = (better ? *better : best_).standing.key.error;
+      if (evaluator.error(p) < least) better = found_from(evaluator, {p, evaluator.key(p)});
     }
     lists_[role] = kept;
   }

@@ -259,9 +259,8 @@ std::vector<Found> searched_at_hand(Spec spec, const Catalogue& catalogue, const
                                     const SearchOptions& options, std::atomic<bool>& stop) {
   spec.parts.stock_only = true;
   DesignSpaces own = design_spaces(spec, catalogue, devices);
-  const auto in_stock = [](const DesignSpace& s) { return s.device_in_stock; };
-  if (std::any_of(own.spaces.begin(), own.spaces.end(), in_stock))
-    std::erase_if(own.spaces, [&](const DesignSpace& s) { return !in_stock(s); });
+  if (holds_transistors(catalogue.stock))
+    std::erase_if(own.spaces, [](const DesignSpace& s) { return !s.device_in_stock; });
   return own.spaces.empty() ? std::vector<Found>() : searched(spec, own, options, {0.0, 0.5}, stop);
 }
 
