@@ -38,7 +38,7 @@ TEST_CASE("the sheet shows what stands near its rating, and counts the rest") {
   const std::string text = sheet_of(stressed());
   CHECK_THAT(text, ContainsSubstring("Stress at the worst corner"));
   CHECK_THAT(text,
-             ContainsSubstring("R3    power                 100 mW  250 mW   125 mW   40 %  hFE max, 60 °C, 12.6 V"));
+             ContainsSubstring("R3    power                 100 mW  250 mW   125 mW    40 %  hFE max, 60 °C, 12.6 V"));
   CHECK_THAT(text, ContainsSubstring("C2    voltage               12.6 V    16 V   12.8 V  78.8 %"));
   CHECK_THAT(text, ContainsSubstring("Q1    junction temperature   60 °C  150 °C   110 °C       -"));
   CHECK_THAT(text, ContainsSubstring("2 more stand under 10 % of their rating."));
