@@ -1,3 +1,4 @@
+#include <algorithm>
 #include <bandwright/stress.hpp>
 #include <cmath>
 #include <nlopt.hpp>
@@ -8,10 +9,13 @@ namespace bandwright {
 
 namespace {
 
-constexpr double kProbe = 1e-3;    // of a range: how far inside it is looked whether a corner is the extreme
-constexpr double kInward = 1e-8;   // of a stress: what can be won inside is rounding
-constexpr double kStep = 1e-4;     // of a range: differences for slopes
-constexpr int kPolishSteps = 40;   // slopes at most
+constexpr double kProbe = 1e-3;   // of a range: how far inside it is looked whether a corner is the extreme
+constexpr double kInward = 1e-8;  // of a stress: what can be won inside is rounding
+constexpr double kStep = 1e-4;    // of a range: differences for slopes
+constexpr int kPolishSteps = 40;  // slopes at most
+constexpr int kMostRounds = 6;    // of turning along ridges
+constexpr int kLineSteps = 12;    // of a golden section
+constexpr double kGolden = 0.6180339887498949;
 constexpr double kNearEnd = 1e-3;  // of a range: what ends so near an end is tried at the end
 constexpr const char* kNoPoint = "no operating point: from rail to rail";
 
@@ -42,6 +46,7 @@ public:
       beside[k] = 1 - beside[k];
       search_from(beside);
     }
+    for (int round = 0; round < kMostRounds && turn_along_ridges(least); ++round) search_from(x_);
     Coordinates ends = x_;
     for (double& share : ends) share = share < kNearEnd ? 0 : share > 1 - kNearEnd ? 1 : share;
     const double there = height(ends);
@@ -55,6 +60,42 @@ public:
   std::string name() const { return box_.name(x_, slot_, sign_); }
 
 private:
+  /// Units of one dissipation differ in what makes it: each coordinate turned to an end, and any other moved to make up
+  /// for it. True where that wins more than rounding.
+  bool turn_along_ridges(double least) {
+    const double before = height_;
+    const Coordinates start = x_;
+    for (std::size_t k = 0; k < start.size(); ++k) {
+      for (const double end : {0.0, 1.0}) {
+        Coordinates turned = start;
+        turned[k] = end;
+        for (std::size_t j = 0; j < start.size() && start[k] != end; ++j)
+          if (j != k) look_along(turned, j);
+      }
+    }
+    return height_ > before + least;
+  }
+
+  /// The highest point of a line through the box along one coordinate: golden section.
+  void look_along(Coordinates x, std::size_t j) {
+    const auto at = [&](double share) {
+      x[j] = share;
+      const StressEnds solved = box_.solve(x);
+      look_at(x, solved);
+      return sign_ * stress_at(solved, slot_, sign_);
+    };
+    double low = 0, high = 1, a = 1 - kGolden, b = kGolden, at_a = at(a), at_b = at(b);
+    for (int i = 0; i < kLineSteps; ++i) {
+      if (at_a > at_b) {
+        high = b, b = a, at_b = at_a;
+        at_a = at(a = high - kGolden * (high - low));
+      } else {
+        low = a, a = b, at_a = at_b;
+        at_b = at(b = low + kGolden * (high - low));
+      }
+    }
+  }
+
   double height(const Coordinates& x) { return sign_ * stress_at(box_.solve(x), slot_, sign_); }
 
   /// By a step into the box.
@@ -89,8 +130,10 @@ private:
     }
   }
 
-  static double objective(const Coordinates& x, Coordinates& gradient, void* self) {
+  static double objective(const Coordinates& tried, Coordinates& gradient, void* self) {
     Extreme& e = *static_cast<Extreme*>(self);
+    Coordinates x = tried;
+    for (double& share : x) share = std::clamp(share, 0.0, 1.0);  // rounding may lie outside
     const StressEnds solved = e.box_.solve(x);
     const double here = e.sign_ * stress_at(solved, e.slot_, e.sign_);
     e.look_at(x, solved);

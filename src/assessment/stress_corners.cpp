@@ -67,7 +67,7 @@ StressEnds between_rails(const Spec& spec, const PartValues& parts, double suppl
     if (i < kResistorRoles && parts[i] > 0) s.high[kWattsSlot + i] = second[i] * second[i] / parts[i];
   }
   s.high[kCollectorEmitterSlot] = supply;
-  s.high[kCurrentSlot] = supply / (r_c + r_e);
+  s.high[kCurrentSlot] = supply / r_c;                             // leakage may take over all that the emitter carries
   s.high[kDissipationSlot] = supply * supply / (4 * (r_c + r_e));  // matched to what stands around it
   return s;
 }

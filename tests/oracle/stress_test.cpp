@@ -29,12 +29,12 @@ using bandwright::WorstStress;
 namespace {
 
 constexpr int kDesigns = 1000;
-constexpr int kUnits = 2000;      // of each design
-constexpr double kCorner = 1e-9;  // of the supply's scale: solvers that stop at 1e-12 of Vth
-constexpr double kInside = 1e-8;  // of the scale: what worst_stress takes for rounding
-// Of the scale, a coarse bound: both searches of a maximum inside the box are local and may end on different humps.
-// Seen: the library 9.6e-5 short in one design, this search 5.3e-4 short in another.
-constexpr double kSearched = 1e-3;
+constexpr int kUnits = 2000;        // of each design
+constexpr double kCorner = 1e-9;    // of the supply's scale: solvers that stop at 1e-12 of Vth
+constexpr double kInside = 1e-8;    // of the scale: what worst_stress takes for rounding
+constexpr double kSearched = 1e-5;  // of the scale: how far this search may go beyond a maximum inside the box
+// Of the scale: how far this search, which has no slopes, may itself fall short on the flat ridges of a dissipation.
+constexpr double kFallsShort = 1e-3;
 constexpr double kMostSaturated = 0.1;  // share of the designs: random stages are not designs
 
 /// One stress of the table: where it stands in the library's answer and in the oracle's.
@@ -97,44 +97,65 @@ Enumerated enumerate(UnitLoads& units, const std::vector<Slot>& slots) {
   return e;
 }
 
-/// Uphill from a corner without slopes: single coordinates and random directions, ever shorter.
-Real climbed_from(UnitLoads& units, const Slot& slot, int sign, Coordinates best, Dice& dice) {
-  const Loads start = units.at(best);
-  Real height = start.saturated ? -1e30L : sign * slot.of(start);
-  const auto try_it = [&](Coordinates x) {
-    for (double& share : x) share = std::clamp(share, 0.0, 1.0);
-    const Loads l = units.at(x);
-    if (l.saturated || !(sign * slot.of(l) > height)) return false;
-    height = sign * slot.of(l);
-    best = x;
-    return true;
-  };
-  for (double step = 0.5; step > 1e-3;) {
-    bool better = false;
-    for (std::size_t k = 0; k < best.size(); ++k) {
-      for (const double by : {-step, step}) {
-        Coordinates x = best;
-        x[k] += by;
-        better = try_it(x) || better;
-      }
-      Coordinates x = best;
-      for (double& share : x) share += step * dice.between(-1, 1);
-      better = try_it(x) || better;
-    }
-    if (!better) step /= 2;
+/// Uphill without slopes: one coordinate at a time, and two against each other along ridges, ever shorter.
+class Climb {
+public:
+  Climb(UnitLoads& units, const Slot& slot, int sign, Coordinates from) : units_(units), slot_(slot), sign_(sign) {
+    try_at(std::move(from));
   }
-  return height;
-}
+  Real height() const { return height_; }
+  void jump_to(const Climb& other) { best_ = other.best_, height_ = other.height_; }
 
-/// From the best corner, and from each of those beside it.
-Real climbed(UnitLoads& units, const Slot& slot, int sign, const Found& from, Dice& dice) {
-  Real height = climbed_from(units, slot, sign, from.at, dice);
+  void go(double shortest, bool ridges) {
+    for (double step = 0.5; step > shortest;) {
+      bool better = false;
+      for (std::size_t k = 0; k < best_.size(); ++k) {
+        better = moved(k, step, k, 0) || moved(k, -step, k, 0) || better;
+        for (std::size_t j = 0; ridges && j < k; ++j)
+          for (const double a : {-step, step}) better = moved(k, a, j, step) || moved(k, a, j, -step) || better;
+      }
+      if (!better) step /= 2;
+    }
+  }
+
+private:
+  bool moved(std::size_t k, double by, std::size_t j, double other) {
+    Coordinates x = best_;
+    x[k] += by;
+    x[j] += other;
+    return try_at(std::move(x));
+  }
+
+  bool try_at(Coordinates x) {
+    for (double& share : x) share = std::clamp(share, 0.0, 1.0);
+    const Loads l = units_.at(x);
+    const Real here = l.saturated ? -1e30L : sign_ * slot_.of(l);
+    if (!best_.empty() && !(here > height_)) return false;
+    height_ = here;
+    best_ = std::move(x);
+    return true;
+  }
+
+  UnitLoads& units_;
+  const Slot& slot_;
+  int sign_;
+  Coordinates best_;
+  Real height_ = 0;
+};
+
+/// From the best corner, and from each of those beside it; from the best of the places so found along ridges.
+Real climbed(UnitLoads& units, const Slot& slot, int sign, const Found& from) {
+  Climb best(units, slot, sign, from.at);
+  best.go(0.02, false);
   for (std::size_t k = 0; k < from.at.size(); ++k) {
     Coordinates beside = from.at;
     beside[k] = 1 - beside[k];
-    height = std::max(height, climbed_from(units, slot, sign, beside, dice));
+    Climb other(units, slot, sign, std::move(beside));
+    other.go(0.02, false);
+    if (other.height() > best.height()) best.jump_to(other);
   }
-  return sign * height;
+  best.go(5e-4, true);
+  return sign * best.height();
 }
 
 /// Every polarised capacitor has its + where the potential is higher at every corner; one that could not has a reason.
@@ -175,7 +196,7 @@ struct Findings {
 };
 
 void compare_end(const Slot& s, UnitLoads& units, int sign, const Found& corner, bool polishes,
-                 const std::string& where, Dice& dice, Findings& f) {
+                 const std::string& where, Findings& f) {
   const double given = sign > 0 ? s.range.max : s.range.min;
   const double over = sign * static_cast<double>(given - corner.value) / s.scale;
   const bool inside = (sign > 0 ? s.range.at_max : s.range.at_min).find("inside") != std::string::npos;
@@ -185,7 +206,7 @@ void compare_end(const Slot& s, UnitLoads& units, int sign, const Found& corner,
   }
   ++f.polished[s.name.substr(s.name.find(' ') + 1)];
   f.corners.add(std::max(-over, 0.0), where + " " + s.name);
-  const Real found = climbed(units, s, sign, corner, dice);
+  const Real found = climbed(units, s, sign, corner);
   const double beyond = sign * static_cast<double>(given - found) / s.scale;
   f.unfound.add(std::max(beyond, 0.0), where + " " + s.name);
   f.missed.add(std::max(-beyond, 0.0), where + " " + s.name);
@@ -231,8 +252,8 @@ void compare_design(int number, const RandomDesign& d, Dice& dice, Findings& f) 
   if (corners.saturated > 0) return;
   for (std::size_t s = 0; s < slots.size(); ++s) {
     const bool is_volts = slots[s].name.ends_with("volts");
-    compare_end(slots[s], units, 1, corners.high[s], true, where, dice, f);
-    compare_end(slots[s], units, -1, corners.low[s], is_volts, where, dice, f);
+    compare_end(slots[s], units, 1, corners.high[s], true, where, f);
+    compare_end(slots[s], units, -1, corners.low[s], is_volts, where, f);
   }
 }
 
@@ -267,7 +288,7 @@ TEST_CASE("worst stress and polarity equal an independent corner solve", "[oracl
   CHECK(f.inside.worst() <= kInside);
   CHECK(f.beyond_corners.worst() > kInside);  // polishing is needed
   CHECK(f.missed.worst() <= kSearched);
-  CHECK(f.unfound.worst() <= kSearched);
+  CHECK(f.unfound.worst() <= kFallsShort);
   CHECK(f.saturated <= kMostSaturated * kDesigns);
   CHECK(f.variants.size() == 6);
   CHECK(f.pnp >= kDesigns / 10);
